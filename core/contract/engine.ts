@@ -1,0 +1,152 @@
+import type { Axis, TimeAxis } from "../model/axis";
+import type { FaultData } from "../model/errors";
+import type { FileReport } from "../model/source";
+import type { Study } from "../study/schema";
+import type { CallOptions } from "./job";
+
+/** A study with the folder its relative paths start from. */
+export interface OpenStudy {
+  readonly study: Study;
+  readonly folder: string;
+  /** File it was read from; empty for one made on the spot from data files. */
+  readonly path: string;
+}
+
+export type RecognisedFile =
+  | { readonly path: string; readonly report: FileReport }
+  | { readonly path: string; readonly refused: FaultData };
+
+/** Which field a view shows. */
+export interface FieldChoice {
+  /** A quantity's id from core/ocean/quantities. */
+  readonly quantity: string;
+  /** Through the study's band, or as it stands (mean and all). */
+  readonly inBand: boolean;
+}
+
+/** What the loaded record is: axes after cutting to region and period. */
+export interface RecordOverview {
+  readonly latitude: Axis;
+  readonly longitude: Axis;
+  /** Regular time axis: missing dates are present and marked. */
+  readonly time: TimeAxis;
+  /** 1 where the date has at least one valid cell. */
+  readonly hasData: Uint8Array;
+  /** Share of non-land cells valid, by date. */
+  readonly coverage: Float64Array;
+  /** 1 where the cell is valid on at least one date. Row-major latitude × longitude. */
+  readonly ocean: Uint8Array;
+  readonly timeDeviationDays: number;
+  readonly cautions: readonly Caution[];
+  /** Bytes the record takes in memory. */
+  readonly bytes: number;
+}
+
+export interface Caution {
+  readonly id: string;
+  /** A sentence with its numbers. */
+  readonly text: string;
+}
+
+/** A picture of latitude × something, row-major, latitudes ascending, NaN where missing. */
+export interface Plane {
+  readonly rows: number;
+  readonly columns: number;
+  readonly values: Float32Array;
+}
+
+/** Profile over latitude with its 95 % band; all arrays are as long as the latitude axis; NaN where too few cells. */
+export interface Profile {
+  readonly mean: Float64Array;
+  /** Half width of the 95 % confidence interval of the mean. */
+  readonly half95: Float64Array;
+  readonly effectiveSize: Float64Array;
+  /** Number of dates that entered. */
+  readonly dates: Float64Array;
+}
+
+/** Everything the Latitudes view draws for one field, date and band. SI units throughout. */
+export interface LatitudesResult {
+  readonly choice: FieldChoice;
+  readonly dateIndex: number;
+  readonly map: Plane;
+  /** Zonal mean of the map on the date. */
+  readonly onDate: Float64Array;
+  /** Mean over the period of the zonal means. */
+  readonly profile: Profile;
+  /** Columns are dates, thinned to at most the columns asked for; `columnDates` are indices into the time axis. */
+  readonly latitudeTime: Plane;
+  readonly columnDates: Int32Array;
+  /** Dates whose filtered value rests on less than 90 % of the filter's weight. 1 = filter end or gap, by date. */
+  readonly filterEnd: Uint8Array;
+  /** Symmetric colour limit for map and latitude–time picture together (98th percentile of magnitude over the record), in SI units. */
+  readonly limits: readonly [number, number];
+  readonly response: BandResponse;
+}
+
+/** Response of the study's filter on the spectrum's frequency axis. */
+export interface BandResponse {
+  /** Cycles a day. */
+  readonly frequency: Float64Array;
+  readonly amplitude: Float64Array;
+  /** Weights on each side of the centre. */
+  readonly halfWidthSteps: number;
+  readonly daysLostEachEnd: number;
+}
+
+/** Region-mean power spectrum by period (Welch). Density is one-sided, variance units per cycle a day. */
+export interface SpectrumResult {
+  readonly quantity: string;
+  readonly frequency: Float64Array;
+  readonly density: Float64Array;
+  readonly segments: number;
+  readonly segmentDays: number;
+  readonly window: string;
+  readonly units: string;
+}
+
+export interface RunSummaryPlace {
+  readonly folder: string;
+  readonly files: readonly string[];
+}
+
+/**
+ * What the engine does. One interface types server and client alike. Every call may be cancelled; long ones report progress.
+ * Errors arrive as Fault.
+ */
+export interface Engine {
+  /** Reads a *.study.json, or makes a study around the data files named. */
+  open(request: { readonly paths: readonly string[] }, options?: CallOptions): Promise<OpenStudy>;
+  /** What is in the files, each recognised or refused with its reason. */
+  describe(request: { readonly paths: readonly string[] }, options?: CallOptions): Promise<readonly RecognisedFile[]>;
+  /** Checks the study and repairs nothing silently; returns it with every default written out. */
+  check(request: { readonly study: unknown }, options?: CallOptions): Promise<Study>;
+  /** Loads the record of one grid. Kept until another record is asked for. */
+  load(request: { readonly open: OpenStudy; readonly grid: string }, options?: CallOptions): Promise<RecordOverview>;
+  latitudes(
+    request: {
+      readonly open: OpenStudy;
+      readonly grid: string;
+      readonly choice: FieldChoice;
+      readonly dateIndex: number;
+      readonly columns: number;
+    },
+    options?: CallOptions,
+  ): Promise<LatitudesResult>;
+  spectrum(
+    request: { readonly open: OpenStudy; readonly grid: string; readonly quantity: string },
+    options?: CallOptions,
+  ): Promise<SpectrumResult>;
+  /** Writes the result folder, whole or not at all. */
+  run(
+    request: { readonly open: OpenStudy; readonly folder: string; readonly overwrite: boolean },
+    options?: CallOptions,
+  ): Promise<RunSummaryPlace>;
+  /** Saves the study beside its data; atomic. */
+  save(
+    request: { readonly open: OpenStudy; readonly path: string },
+    options?: CallOptions,
+  ): Promise<{ readonly path: string }>;
+}
+
+export type EngineMethod = keyof Engine;

@@ -1,0 +1,79 @@
+import { z } from "zod";
+
+const identifier = z.string().regex(/^[A-Za-z][A-Za-z0-9_-]{0,31}$/, "a short name of letters, digits, - and _");
+const dateText = z.string().regex(/^\d{4}-\d{2}-\d{2}$/, "a date as YYYY-MM-DD");
+
+const gridSource = z.strictObject({
+  id: identifier,
+  label: z.string().max(120).default(""),
+  files: z.array(z.string().min(1)).min(1),
+  height: z.string().min(1).default("auto"),
+});
+
+const region = z.strictObject({
+  west: z.number().min(-360).max(720),
+  east: z.number().min(-360).max(720),
+  south: z.number().min(-90).max(90),
+  north: z.number().min(-90).max(90),
+});
+
+const period = z.strictObject({ from: dateText, to: dateText });
+
+export const geostrophySettings = z.strictObject({
+  stencil: z.union([z.literal(3), z.literal(5), z.literal(7), z.literal(9)]).default(7),
+  earth: z.enum(["ellipsoid", "sphere"]).default("ellipsoid"),
+  radius: z.number().min(6.3e6).max(6.4e6).default(6371000),
+  gravity: z.union([z.literal("latitude"), z.number().min(9.7).max(9.9)]).default("latitude"),
+  omega: z.number().min(7.2e-5).max(7.4e-5).default(7.292115e-5),
+  equator: z.enum(["blank"]).default("blank"),
+  equatorDegrees: z.number().min(0).max(30).default(5),
+});
+
+export const backgroundSettings = z.strictObject({
+  mean: z.boolean().default(true),
+  trend: z.boolean().default(true),
+  annual: z.boolean().default(true),
+  semiannual: z.boolean().default(true),
+});
+
+export const bandSettings = z.strictObject({
+  shortestDays: z.number().positive().default(90),
+  longestDays: z.number().positive().default(540),
+  filter: z.enum(["lanczos", "none"]).default("lanczos"),
+});
+
+export const outputSettings = z.strictObject({
+  fields: z.enum(["none", "mean", "all"]).default("mean"),
+  figures: z.array(z.string()).default(["latitudes"]),
+  formats: z.array(z.enum(["svg"])).default(["svg"]),
+  widthMm: z.number().min(60).max(400).default(174),
+});
+
+/** The study file, version 1. Unknown keys are refused (see read.ts, which names the nearest known key). */
+export const studySchema = z.strictObject({
+  strake: z.literal(1),
+  title: z.string().max(200).default(""),
+  grids: z.array(gridSource).min(1),
+  tracks: z.array(gridSource).default([]),
+  /** Left out: all of the first grid. */
+  region: region.optional(),
+  /** Left out: all of the first grid. */
+  period: period.optional(),
+  geostrophy: geostrophySettings.prefault({}),
+  background: backgroundSettings.prefault({}),
+  band: bandSettings.prefault({}),
+  jets: z.strictObject({}).prefault({}),
+  eddyTest: z.strictObject({}).prefault({}),
+  scales: z.strictObject({}).prefault({}),
+  compare: z.strictObject({}).prefault({}),
+  outputs: outputSettings.prefault({}),
+});
+
+/** A study with every default written out. */
+export type Study = z.output<typeof studySchema>;
+export type GridSettings = z.output<typeof gridSource>;
+export type Region = z.output<typeof region>;
+export type Period = z.output<typeof period>;
+export type GeostrophySettings = z.output<typeof geostrophySettings>;
+export type BackgroundSettings = z.output<typeof backgroundSettings>;
+export type BandSettings = z.output<typeof bandSettings>;
