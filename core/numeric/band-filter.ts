@@ -5,9 +5,9 @@ import { lanczosLowPass, symmetricResponse } from "./lanczos";
  * taken off the long periods (low-pass); `fast` null: nothing off the short ones (high-pass, value minus slow).
  */
 export interface BandFilter {
-	readonly halfWidth: number;
-	readonly fast: Float64Array | null;
-	readonly slow: Float64Array | null;
+  readonly halfWidth: number;
+  readonly fast: Float64Array | null;
+  readonly slow: Float64Array | null;
 }
 
 /** Share of a low-pass's weight below which a filtered value is not given. */
@@ -20,66 +20,39 @@ export const trustedWeightShare = 0.9;
  * the longest finite cut-off (or the shortest, for a low-pass), so that the window's first zero lies at that period; the
  * rule n >= 1.3 / (f2 - f1) [Duchon 1979, from memory] is met for every band whose edges differ by more than a factor of 2.3.
  */
-export function lanczosBand(
-	shortestSamples: number,
-	longestSamples: number,
-): BandFilter {
-	const slowest = Number.isFinite(longestSamples)
-		? longestSamples
-		: shortestSamples * 2;
-	const halfWidth = Math.max(2, Math.ceil(slowest));
-	return {
-		halfWidth,
-		fast: lanczosLowPass(1 / shortestSamples, halfWidth),
-		slow: Number.isFinite(longestSamples)
-			? lanczosLowPass(1 / longestSamples, halfWidth)
-			: null,
-	};
+export function lanczosBand(shortestSamples: number, longestSamples: number): BandFilter {
+  const slowest = Number.isFinite(longestSamples) ? longestSamples : shortestSamples * 2;
+  const halfWidth = Math.max(2, Math.ceil(slowest));
+  return {
+    halfWidth,
+    fast: lanczosLowPass(1 / shortestSamples, halfWidth),
+    slow: Number.isFinite(longestSamples) ? lanczosLowPass(1 / longestSamples, halfWidth) : null,
+  };
 }
 
 /** Amplitude response at a frequency in cycles a sample. */
-export function bandResponse(
-	filter: BandFilter,
-	frequencyPerSample: number,
-): number {
-	const fast = filter.fast
-		? symmetricResponse(filter.fast, frequencyPerSample)
-		: 1;
-	return (
-		fast -
-		(filter.slow ? symmetricResponse(filter.slow, frequencyPerSample) : 0)
-	);
+export function bandResponse(filter: BandFilter, frequencyPerSample: number): number {
+  const fast = filter.fast ? symmetricResponse(filter.fast, frequencyPerSample) : 1;
+  return fast - (filter.slow ? symmetricResponse(filter.slow, frequencyPerSample) : 0);
 }
 
 /**
  * Share of each low-pass's weight that lies on samples with data, the smaller of the two, by sample. 1 well inside a
  * gap-free record, about one half at its ends; may exceed 1 where missing samples lie under negative weights.
  */
-export function weightShare(
-	filter: BandFilter,
-	hasData: Uint8Array,
-): Float64Array {
-	return Float64Array.from(hasData, (_, t) =>
-		Math.min(
-			shareAt(filter.fast, filter.halfWidth, hasData, t),
-			shareAt(filter.slow, filter.halfWidth, hasData, t),
-		),
-	);
+export function weightShare(filter: BandFilter, hasData: Uint8Array): Float64Array {
+  return Float64Array.from(hasData, (_, t) =>
+    Math.min(shareAt(filter.fast, filter.halfWidth, hasData, t), shareAt(filter.slow, filter.halfWidth, hasData, t)),
+  );
 }
 
-function shareAt(
-	weights: Float64Array | null,
-	halfWidth: number,
-	hasData: Uint8Array,
-	t: number,
-): number {
-	if (!weights) return 1;
-	let share = 0;
-	const from = Math.max(0, t - halfWidth);
-	const to = Math.min(hasData.length - 1, t + halfWidth);
-	for (let s = from; s <= to; s++)
-		if (hasData[s]) share += weights[s - t + halfWidth];
-	return share;
+function shareAt(weights: Float64Array | null, halfWidth: number, hasData: Uint8Array, t: number): number {
+  if (!weights) return 1;
+  let share = 0;
+  const from = Math.max(0, t - halfWidth);
+  const to = Math.min(hasData.length - 1, t + halfWidth);
+  for (let s = from; s <= to; s++) if (hasData[s]) share += weights[s - t + halfWidth];
+  return share;
 }
 
 /**
@@ -87,43 +60,30 @@ function shareAt(
  * samples, so a constant stays constant; NaN samples are left out and never spread beyond the half-width. NaN where less
  * than a quarter of either low-pass's weight lies on data. Samples outside the series count as missing.
  */
-export function filterSeries(
-	series: Float64Array,
-	filter: BandFilter,
-	at?: Int32Array,
-): Float64Array {
-	const count = at ? at.length : series.length;
-	const out = new Float64Array(count);
-	for (let i = 0; i < count; i++) {
-		const t = at ? at[i] : i;
-		const fast = filter.fast
-			? weightedMean(series, filter.fast, filter.halfWidth, t)
-			: series[t];
-		const slow = filter.slow
-			? weightedMean(series, filter.slow, filter.halfWidth, t)
-			: 0;
-		out[i] = fast - slow;
-	}
-	return out;
+export function filterSeries(series: Float64Array, filter: BandFilter, at?: Int32Array): Float64Array {
+  const count = at ? at.length : series.length;
+  const out = new Float64Array(count);
+  for (let i = 0; i < count; i++) {
+    const t = at ? at[i] : i;
+    const fast = filter.fast ? weightedMean(series, filter.fast, filter.halfWidth, t) : series[t];
+    const slow = filter.slow ? weightedMean(series, filter.slow, filter.halfWidth, t) : 0;
+    out[i] = fast - slow;
+  }
+  return out;
 }
 
-function weightedMean(
-	series: Float64Array,
-	weights: Float64Array,
-	halfWidth: number,
-	t: number,
-): number {
-	const from = Math.max(0, t - halfWidth);
-	const to = Math.min(series.length - 1, t + halfWidth);
-	let sum = 0;
-	let share = 0;
-	for (let s = from; s <= to; s++) {
-		const value = series[s];
-		if (!Number.isNaN(value)) {
-			const weight = weights[s - t + halfWidth];
-			sum += weight * value;
-			share += weight;
-		}
-	}
-	return share < leastWeightShare ? Number.NaN : sum / share;
+function weightedMean(series: Float64Array, weights: Float64Array, halfWidth: number, t: number): number {
+  const from = Math.max(0, t - halfWidth);
+  const to = Math.min(series.length - 1, t + halfWidth);
+  let sum = 0;
+  let share = 0;
+  for (let s = from; s <= to; s++) {
+    const value = series[s];
+    if (!Number.isNaN(value)) {
+      const weight = weights[s - t + halfWidth];
+      sum += weight * value;
+      share += weight;
+    }
+  }
+  return share < leastWeightShare ? Number.NaN : sum / share;
 }

@@ -2,47 +2,29 @@ import { eastwardDerivative, northwardDerivative } from "./gradients";
 import type { GridGeometry } from "./grid-geometry";
 
 export interface VelocityPlanes {
-	readonly u: Float64Array;
-	readonly v: Float64Array;
+  readonly u: Float64Array;
+  readonly v: Float64Array;
 }
 
 /**
  * Geostrophic velocity in m s-1 from a height plane in metres: u = -(g/f) d(height)/dy, v = (g/f) d(height)/dx.
  * Row-major rows × columns. NaN where the height is, where no difference fits, and in the blanked belt at the equator.
  */
-export function geostrophicVelocity(
-	height: Float64Array,
-	geometry: GridGeometry,
-): VelocityPlanes {
-	return {
-		u: scaledByGravityOverCoriolis(
-			northwardDerivative(height, geometry),
-			geometry,
-			-1,
-		),
-		v: scaledByGravityOverCoriolis(
-			eastwardDerivative(height, geometry),
-			geometry,
-			1,
-		),
-	};
+export function geostrophicVelocity(height: Float64Array, geometry: GridGeometry): VelocityPlanes {
+  return {
+    u: scaledByGravityOverCoriolis(northwardDerivative(height, geometry), geometry, -1),
+    v: scaledByGravityOverCoriolis(eastwardDerivative(height, geometry), geometry, 1),
+  };
 }
 
 /** Turns a height slope into a velocity in place: times sign × g/f, NaN in the blanked belt. Returns the same array. */
-export function scaledByGravityOverCoriolis(
-	slope: Float64Array,
-	geometry: GridGeometry,
-	sign: 1 | -1,
-): Float64Array {
-	const { rows, columns, gravity, coriolis, blanked } = geometry;
-	for (let row = 0; row < rows; row++) {
-		const factor = blanked[row]
-			? Number.NaN
-			: (sign * gravity[row]) / coriolis[row];
-		for (let i = row * columns; i < (row + 1) * columns; i++)
-			slope[i] *= factor;
-	}
-	return slope;
+export function scaledByGravityOverCoriolis(slope: Float64Array, geometry: GridGeometry, sign: 1 | -1): Float64Array {
+  const { rows, columns, gravity, coriolis, blanked } = geometry;
+  for (let row = 0; row < rows; row++) {
+    const factor = blanked[row] ? Number.NaN : (sign * gravity[row]) / coriolis[row];
+    for (let i = row * columns; i < (row + 1) * columns; i++) slope[i] *= factor;
+  }
+  return slope;
 }
 
 /**
@@ -50,9 +32,9 @@ export function scaledByGravityOverCoriolis(
  * Geopotential in m2 s-2 (for heights: gravity times height). Errors: none; infinite at the equator.
  */
 export function crossTrackVelocity(
-	geopotentialDifference: number,
-	distanceMetres: number,
-	coriolisParameterAtMiddle: number,
+  geopotentialDifference: number,
+  distanceMetres: number,
+  coriolisParameterAtMiddle: number,
 ): number {
-	return geopotentialDifference / (distanceMetres * coriolisParameterAtMiddle);
+  return geopotentialDifference / (distanceMetres * coriolisParameterAtMiddle);
 }

@@ -5,27 +5,24 @@ export type PlaneLookup = (id: string) => Float64Array;
 
 /** A field derived from height. One file a quantity, one line in the index. */
 export interface Quantity {
-	readonly id: string;
-	readonly title: string;
-	/** SI units as CF writes them. */
-	readonly units: string;
-	/** Empty where CF has no name. */
-	readonly standardName: string;
-	/** Name in the files that a run writes. */
-	readonly variable: string;
-	/** A linear function of height: may be filtered after reduction. */
-	readonly linear: boolean;
-	/** Signed quantities get a diverging colour map, others a sequential one. */
-	readonly signed: boolean;
-	/** Ids of the quantities it is computed from; "height" is given. */
-	readonly inputs: readonly string[];
-	/** NaN in any input gives NaN. Must not change its inputs. */
-	readonly compute: (
-		plane: PlaneLookup,
-		geometry: GridGeometry,
-	) => Float64Array;
+  readonly id: string;
+  readonly title: string;
+  /** SI units as CF writes them. */
+  readonly units: string;
+  /** Empty where CF has no name. */
+  readonly standardName: string;
+  /** Name in the files that a run writes. */
+  readonly variable: string;
+  /** A linear function of height: may be filtered after reduction. */
+  readonly linear: boolean;
+  /** Signed quantities get a diverging colour map, others a sequential one. */
+  readonly signed: boolean;
+  /** Ids of the quantities it is computed from; "height" is given. */
+  readonly inputs: readonly string[];
+  /** NaN in any input gives NaN. Must not change its inputs. */
+  readonly compute: (plane: PlaneLookup, geometry: GridGeometry) => Float64Array;
 }
 
 export function defineQuantity(quantity: Quantity): Quantity {
-	return Object.freeze(quantity);
+  return Object.freeze(quantity);
 }

@@ -8,10 +8,10 @@ import { speed } from "./speed";
 
 /** Every quantity Strake derives, in the order menus show them. */
 export const quantities: readonly Quantity[] = [
-	height,
-	eastwardVelocity,
-	northwardVelocity,
-	speed,
-	vorticity,
-	rossbyNumber,
+  height,
+  eastwardVelocity,
+  northwardVelocity,
+  speed,
+  vorticity,
+  rossbyNumber,
 ];

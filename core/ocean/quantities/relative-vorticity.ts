@@ -3,14 +3,13 @@ import { defineQuantity } from "./define";
 
 /** Relative vorticity of the geostrophic flow in s-1. NaN rules: see relativeVorticity. */
 export const vorticity = defineQuantity({
-	id: "vorticity",
-	title: "Relative vorticity",
-	units: "s-1",
-	standardName: "ocean_relative_vorticity",
-	variable: "vorticity",
-	linear: true,
-	signed: true,
-	inputs: ["u", "v"],
-	compute: (plane, geometry) =>
-		relativeVorticity({ u: plane("u"), v: plane("v") }, geometry),
+  id: "vorticity",
+  title: "Relative vorticity",
+  units: "s-1",
+  standardName: "ocean_relative_vorticity",
+  variable: "vorticity",
+  linear: true,
+  signed: true,
+  inputs: ["u", "v"],
+  compute: (plane, geometry) => relativeVorticity({ u: plane("u"), v: plane("v") }, geometry),
 });
