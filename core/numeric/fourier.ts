@@ -1,0 +1,106 @@
+import FFT from "fft.js";
+
+/** Discrete Fourier transform of a complex sequence; exp(-2 pi i jk / n), no scaling. */
+export interface ComplexSequence {
+  readonly real: Float64Array;
+  readonly imaginary: Float64Array;
+}
+
+type Transform = (real: Float64Array, imaginary: Float64Array) => ComplexSequence;
+
+const planned = new Map<number, Transform>();
+
+/** Forward transform of any length: powers of two directly, others by Bluestein's chirp (Bluestein 1970, IEEE Trans. AU-18). */
+export function fourierTransform(real: Float64Array, imaginary?: Float64Array): ComplexSequence {
+  const length = real.length;
+  let transform = planned.get(length);
+  if (!transform) {
+    transform = isPowerOfTwo(length) ? powerOfTwoTransform(length) : chirpTransform(length);
+    planned.set(length, transform);
+  }
+  return transform(real, imaginary ?? new Float64Array(length));
+}
+
+function isPowerOfTwo(length: number): boolean {
+  return length > 1 && (length & (length - 1)) === 0;
+}
+
+function powerOfTwoTransform(length: number): Transform {
+  const fft = new FFT(length);
+  const input = new Float64Array(2 * length);
+  const output = new Float64Array(2 * length);
+  return (real, imaginary) => {
+    interleave(real, imaginary, input);
+    fft.transform(output, input);
+    return separate(output, length);
+  };
+}
+
+function chirpTransform(length: number): Transform {
+  if (length === 1) return (real, imaginary) => ({ real: real.slice(), imaginary: imaginary.slice() });
+  let padded = 2;
+  while (padded < 2 * length - 1) padded *= 2;
+  const fft = new FFT(padded);
+  const cosine = new Float64Array(length);
+  const sine = new Float64Array(length);
+  for (let k = 0; k < length; k++) {
+    // k² taken modulo 2n before scaling keeps the phase exact for long records.
+    const phase = (Math.PI * ((k * k) % (2 * length))) / length;
+    cosine[k] = Math.cos(phase);
+    sine[k] = Math.sin(phase);
+  }
+  const chirp = new Float64Array(2 * padded);
+  for (let k = 0; k < length; k++) {
+    for (const place of k === 0 ? [0] : [k, padded - k]) {
+      chirp[2 * place] = cosine[k];
+      chirp[2 * place + 1] = sine[k];
+    }
+  }
+  const chirpSpectrum = new Float64Array(2 * padded);
+  fft.transform(chirpSpectrum, chirp);
+  const work = new Float64Array(2 * padded);
+  const spectrum = new Float64Array(2 * padded);
+  return (real, imaginary) => {
+    work.fill(0);
+    for (let k = 0; k < length; k++) {
+      work[2 * k] = real[k] * cosine[k] + imaginary[k] * sine[k];
+      work[2 * k + 1] = imaginary[k] * cosine[k] - real[k] * sine[k];
+    }
+    fft.transform(spectrum, work);
+    for (let k = 0; k < padded; k++) {
+      const a = spectrum[2 * k];
+      const b = spectrum[2 * k + 1];
+      const c = chirpSpectrum[2 * k];
+      const d = chirpSpectrum[2 * k + 1];
+      spectrum[2 * k] = a * c - b * d;
+      spectrum[2 * k + 1] = a * d + b * c;
+    }
+    fft.inverseTransform(work, spectrum);
+    const outReal = new Float64Array(length);
+    const outImaginary = new Float64Array(length);
+    for (let k = 0; k < length; k++) {
+      const a = work[2 * k];
+      const b = work[2 * k + 1];
+      outReal[k] = a * cosine[k] + b * sine[k];
+      outImaginary[k] = b * cosine[k] - a * sine[k];
+    }
+    return { real: outReal, imaginary: outImaginary };
+  };
+}
+
+function interleave(real: Float64Array, imaginary: Float64Array, into: Float64Array): void {
+  for (let k = 0; k < real.length; k++) {
+    into[2 * k] = real[k];
+    into[2 * k + 1] = imaginary[k];
+  }
+}
+
+function separate(interleaved: Float64Array, length: number): ComplexSequence {
+  const real = new Float64Array(length);
+  const imaginary = new Float64Array(length);
+  for (let k = 0; k < length; k++) {
+    real[k] = interleaved[2 * k];
+    imaginary[k] = interleaved[2 * k + 1];
+  }
+  return { real, imaginary };
+}

@@ -1,0 +1,50 @@
+/** Mean and standard deviation (n - 1) of the valid samples; two passes; NaN where too few. */
+export function meanAndDeviation(series: Float64Array): { mean: number; deviation: number; count: number } {
+  let count = 0;
+  let sum = 0;
+  for (const value of series) {
+    if (Number.isNaN(value)) continue;
+    sum += value;
+    count++;
+  }
+  const mean = count > 0 ? sum / count : Number.NaN;
+  let squares = 0;
+  for (const value of series) if (!Number.isNaN(value)) squares += (value - mean) * (value - mean);
+  return { mean, deviation: count > 1 ? Math.sqrt(squares / (count - 1)) : Number.NaN, count };
+}
+
+/**
+ * Autocorrelation at lags 0 … longestLag of a series with gaps: lagged products over pairs of valid samples, about the mean,
+ * divided by the full record's variance (the biased estimate, which keeps |r| <= 1 on gap-free series).
+ */
+export function autocorrelation(series: Float64Array, longestLag: number): Float64Array {
+  const { mean, count } = meanAndDeviation(series);
+  const out = new Float64Array(longestLag + 1);
+  for (let lag = 0; lag <= longestLag; lag++) {
+    let sum = 0;
+    for (let t = 0; t + lag < series.length; t++) {
+      const product = (series[t] - mean) * (series[t + lag] - mean);
+      if (!Number.isNaN(product)) sum += product;
+    }
+    out[lag] = sum / count;
+  }
+  const variance = out[0];
+  return out.map((value) => value / variance);
+}
+
+/** Effective sample size of the mean of an AR(1) series: N (1 - r) / (1 + r), within 1 … N. Ref: Leith 1973, J. Appl. Meteor. 12, 1066-1069 [from memory]. */
+export function effectiveSizeOfMean(count: number, lagOne: number): number {
+  return Math.min(count, Math.max(1, (count * (1 - lagOne)) / (1 + lagOne)));
+}
+
+/**
+ * Effective sample size from the products of two series' autocorrelations: N / sum over all lags of r1 r2 (1 - |k|/N), for
+ * band-passed series that AR(1) does not describe. Both start at lag 0. Ref: Bretherton et al. 1999, J. Climate 12, 1990-2009.
+ */
+export function effectiveSizeFromLags(count: number, first: Float64Array, second: Float64Array): number {
+  let sum = first[0] * second[0];
+  for (let k = 1; k < Math.min(first.length, second.length, count); k++) {
+    sum += 2 * first[k] * second[k] * (1 - k / count);
+  }
+  return Math.min(count, Math.max(1, count / sum));
+}

@@ -1,0 +1,80 @@
+import { formatDay } from "../model/calendar";
+import type { HeightRecord } from "./record";
+import type { Study } from "./schema";
+
+export interface Caution {
+  readonly id: string;
+  readonly text: string;
+}
+
+/** What gridded altimetry resolves at best: about 30 days and 150 to 200 km. Common practice, no source. */
+const resolvedDays = 30;
+
+type Rule = (study: Study, record: HeightRecord) => string | null;
+
+const rules: Readonly<Record<string, Rule>> = {
+  standing: () =>
+    "Geostrophic part only: no wind drift, tides, inertial or wave-driven motion. Not for navigation or operations at sea; follow local rules and licensed practice.",
+  resolution: ({ band }) =>
+    band.filter !== "none" && band.shortestDays < resolvedDays
+      ? `The band starts at ${band.shortestDays} days; mapped heights hold little true signal below about ${resolvedDays} days and 150 to 200 km.`
+      : null,
+  shortRecord: ({ band }, { time, cube }) => {
+    const days = cube.dates * time.step;
+    return band.filter !== "none" && days < 10 * band.longestDays
+      ? `The record of ${Math.round(days)} days holds ${(days / band.longestDays).toFixed(1)} of the longest period kept (${band.longestDays} days); ten or more are wanted for firm statistics.`
+      : null;
+  },
+  annualFit: ({ background }, { time, cube }) => {
+    const days = cube.dates * time.step;
+    return (background.annual || background.semiannual) && days < 730
+      ? `An annual cycle fitted to ${Math.round(days)} days also takes up slow changes that are not annual.`
+      : null;
+  },
+  equator: ({ geostrophy }, { axes }) => {
+    const rows = axes.latitude.values.filter((value) => Math.abs(value) < geostrophy.equatorDegrees).length;
+    return rows > 0
+      ? `${rows} rows within ${geostrophy.equatorDegrees}° of the equator are blank: f vanishes there.`
+      : null;
+  },
+  gaps: (_, { hasData, time }) => {
+    const missing = hasData.length - hasData.reduce((sum, flag) => sum + flag, 0);
+    if (missing === 0) return null;
+    const first = formatDay(time.calendar, time.values[hasData.indexOf(0)]);
+    return `${missing} of ${hasData.length} dates have no data (the first is ${first}); they stay blank and the filter leans on their neighbours.`;
+  },
+  coast: (_, record) => {
+    const share = nearLandShare(record);
+    return share >= 0.01
+      ? `${(100 * share).toFixed(1)} % of the ocean cells touch land or the edge of the data, where slopes are one-sided and altimetry is poor.`
+      : null;
+  },
+};
+
+/** The cautions that apply to this study and record, each a sentence with its numbers. */
+export function cautionsFor(study: Study, record: HeightRecord): Caution[] {
+  return Object.entries(rules).flatMap(([id, rule]) => {
+    const text = rule(study, record);
+    return text ? [{ id, text }] : [];
+  });
+}
+
+/** Share of ocean cells with a land cell among their four neighbours inside the region. */
+function nearLandShare({ ocean, cube: { rows, columns } }: HeightRecord): number {
+  let near = 0;
+  let total = 0;
+  for (let row = 0; row < rows; row++) {
+    for (let column = 0; column < columns; column++) {
+      const cell = row * columns + column;
+      if (!ocean[cell]) continue;
+      total++;
+      const landBeside =
+        (row > 0 && !ocean[cell - columns]) ||
+        (row < rows - 1 && !ocean[cell + columns]) ||
+        (column > 0 && !ocean[cell - 1]) ||
+        (column < columns - 1 && !ocean[cell + 1]);
+      if (landBeside) near++;
+    }
+  }
+  return total > 0 ? near / total : 0;
+}

@@ -1,0 +1,29 @@
+import type { JobFlags } from "../job";
+import { backgroundTask } from "./background";
+import { fieldPlanesTask } from "./field-planes";
+import { limitsTask } from "./limits";
+import { mapTask } from "./map";
+import { meansTask } from "./means";
+import { pictureTask } from "./picture";
+import { readTask } from "./read";
+import { reduceTask } from "./reduce";
+import { spectrumTask } from "./spectrum";
+import { zonalBandTask } from "./zonal-band";
+
+/** Everything a worker can be asked to do: one file a task, one line here. */
+export const tasks = {
+  read: readTask,
+  background: backgroundTask,
+  reduce: reduceTask,
+  map: mapTask,
+  picture: pictureTask,
+  zonalBand: zonalBandTask,
+  limits: limitsTask,
+  spectrum: spectrumTask,
+  means: meansTask,
+  fieldPlanes: fieldPlanesTask,
+} satisfies Record<string, (args: never, job: JobFlags) => unknown>;
+
+export type TaskName = keyof typeof tasks;
+export type TaskArguments<N extends TaskName> = Parameters<(typeof tasks)[N]>[0];
+export type TaskResult<N extends TaskName> = Awaited<ReturnType<(typeof tasks)[N]>>;
