@@ -28,12 +28,12 @@ def first_with(dataset, attribute, accepted):
 
 
 def opened():
-    """The sample's height (time, latitude, longitude), unpacked by xarray, and its grid."""
+    """The sample's packed height (time, latitude, longitude) as stored, and its grid."""
     files = sorted(FILES.glob("*.nc"))
     if not files:
         print(f"no sample grid under {FILES.parent.name}/{FILES.name}: nothing to compute")
         sys.exit(0)
-    dataset = xarray.open_mfdataset(files, combine="by_coords") if len(files) > 1 else xarray.open_dataset(files[0])
+    dataset = xarray.open_mfdataset(files, combine="by_coords", mask_and_scale=False)
     height = dataset[first_with(dataset, "standard_name", lambda text: text.startswith("sea_surface_height_above"))]
     latitude = first_with(dataset, "units", lambda text: text.startswith("degrees_north"))
     longitude = first_with(dataset, "units", lambda text: text.startswith("degrees_east"))
@@ -45,8 +45,17 @@ def opened():
     return files, height, Grid(np.asarray(dataset[latitude].values, dtype=float), lon, periodic)
 
 
+def unpacked(height):
+    """Metres in float64, CF section 8.1: fill tested before unpacking. (xarray's own decoding may stop at float32.)"""
+    stored = np.asarray(height.values)
+    fill = height.attrs.get("_FillValue", height.attrs.get("missing_value"))
+    metres = stored.astype(float) * float(height.attrs.get("scale_factor", 1)) + float(height.attrs.get("add_offset", 0))
+    metres = metres if fill is None else np.where(stored == fill, np.nan, metres)
+    return metres / 100 if height.attrs["units"] == "cm" else metres
+
+
 def fields_of(height, grid, stencil):
-    u, v = geostrophic_velocity(np.asarray(height, dtype=float), grid, stencil, "ellipsoid")
+    u, v = geostrophic_velocity(unpacked(height), grid, stencil, "ellipsoid")
     return {"u": u, "v": v, "vorticity": relative_vorticity(u, v, grid, stencil, "ellipsoid")}
 
 
@@ -59,7 +68,7 @@ def middle_date():
     )
     cases = []
     for stencil in (3, 7):
-        fields = fields_of(plane.values, grid, stencil)
+        fields = fields_of(plane, grid, stencil)
         cases.append({
             "stencil": stencil,
             **{name: field[rows, columns] for name, field in fields.items()},
@@ -76,7 +85,7 @@ def middle_date():
         "column": columns,
         "latitude": grid.latitude[rows],
         "longitude": grid.longitude[columns],
-        "heightMetres": plane.values.astype(float)[rows, columns],
+        "heightMetres": unpacked(plane)[rows, columns],
         "cases": cases,
     })
 
@@ -104,7 +113,7 @@ def all_dates(target):
             written[name].units = "s-1" if name == "vorticity" else "m s-1"
         for start in range(0, height.shape[0], 50):
             block = slice(start, start + 50)
-            for name, field in fields_of(height[block].values, grid, 7).items():
+            for name, field in fields_of(height[block], grid, 7).items():
                 written[name][block] = field
     print(f"{target}: {height.shape[0]} dates")
 
