@@ -56,7 +56,29 @@ export function formatLatitude(latitude: number, digits: number): string {
   return `${text}° ${latitude < 0 ? "S" : "N"}`;
 }
 
-/** Whole numbers with a thin gap between thousands: "41 312". */
+/** "150–125° W", "20° W–10° E"; a whole turn is "all longitudes". Edges are rounded to hundredths of a degree. */
+export function formatLongitudeRange(west: number, east: number): string {
+  if (Math.abs(east - west) >= 360 - 1e-6) return "all longitudes";
+  return joinedRange(formatLongitude(west, degreeDigits(west)), formatLongitude(east, degreeDigits(east)));
+}
+
+/** "20–41° N", "10° S–5° N". Edges are rounded to hundredths of a degree. */
+export function formatLatitudeRange(south: number, north: number): string {
+  return joinedRange(formatLatitude(south, degreeDigits(south)), formatLatitude(north, degreeDigits(north)));
+}
+
+function degreeDigits(degrees: number): number {
+  return decimalsForStep(Math.round(degrees * 100) / 100);
+}
+
+/** Both ends with the hemisphere named once where they share it. */
+function joinedRange(first: string, second: string): string {
+  const [number, hemisphere] = first.split("° ");
+  if (hemisphere && second.endsWith(` ${hemisphere}`)) return `${number}–${second}`;
+  return `${first}–${second}`;
+}
+
+/** Whole numbers with a no-break space between thousands: "41 312". */
 export function formatCount(count: number): string {
   return Math.round(count)
     .toString()

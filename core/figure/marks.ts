@@ -1,4 +1,5 @@
 import type { PathMark, RasterMark, TextMark } from "./scene";
+import { plainLine } from "./xml-text";
 
 /** Where glyphs of a line reach above and below its base line, in type sizes (the bundled font's figures and descenders). */
 export const ascentShare = 0.74;
@@ -11,8 +12,9 @@ interface TextStyle {
   readonly anchor?: "start" | "middle" | "end";
 }
 
+/** One line of text on its base line; control and bidirectional characters are dropped. */
 export function textMark(id: string, x: number, y: number, text: string, style: TextStyle): TextMark {
-  return { kind: "text", id, x, y, text, weight: 400, anchor: "start", ...style };
+  return { kind: "text", id, x, y, text: plainLine(text), weight: 400, anchor: "start", ...style };
 }
 
 interface PathStyle {
@@ -82,9 +84,9 @@ function finiteRuns(xs: ArrayLike<number>, ys: ArrayLike<number>): [start: numbe
   const runs: [number, number][] = [];
   let start = -1;
   for (let i = 0; i <= xs.length; i++) {
-    const isFinite = i < xs.length && Number.isFinite(xs[i]) && Number.isFinite(ys[i]);
-    if (isFinite && start < 0) start = i;
-    if (!isFinite && start >= 0) {
+    const isDrawn = i < xs.length && Number.isFinite(xs[i]) && Number.isFinite(ys[i]);
+    if (isDrawn && start < 0) start = i;
+    if (!isDrawn && start >= 0) {
       runs.push([start, i]);
       start = -1;
     }

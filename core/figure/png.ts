@@ -55,12 +55,7 @@ function paletteBytes(palette: Map<number, number>): Uint8Array {
 }
 
 /** Each line starts with filter type 0 (none). */
-function paletteLines(
-  packed: Uint32Array,
-  palette: Map<number, number>,
-  columns: number,
-  rows: number,
-): Uint8Array {
+function paletteLines(packed: Uint32Array, palette: Map<number, number>, columns: number, rows: number): Uint8Array {
   const lines = new Uint8Array(rows * (columns + 1));
   for (let row = 0; row < rows; row++) {
     for (let column = 0; column < columns; column++) {

@@ -34,25 +34,30 @@ export function usualSpacing(centres: ArrayLike<number>): number {
   return spacings.length > 0 ? spacings[spacings.length >> 1] : Number.NaN;
 }
 
+/** For `count` equal pixels from `from` to `to`: the index of the cell (centres ascending) nearest to each pixel's centre. */
+export function nearestCells(centres: ArrayLike<number>, from: number, to: number, count: number): Int32Array {
+  return Int32Array.from({ length: count }, (_, pixel) => nearestCell(centres, pixelCentre(pixel, from, to, count)));
+}
+
 /**
- * For `count` equal pixels from `from` to `to`: the index of the cell that owns each pixel's centre, or -1 in a gap. A cell
- * reaches half way to its neighbour; where the neighbour is farther than 1.5 usual spacings it reaches half a usual spacing
- * only. `centres` ascend; `from` may exceed `to`.
+ * The same with gaps: -1 for pixels in a gap. A cell reaches half way to its neighbour; where the neighbour is farther than
+ * 1.5 usual spacings, or there is none, it reaches half a usual spacing only.
  */
-export function pixelCells(centres: ArrayLike<number>, from: number, to: number, count: number): Int32Array {
+export function nearestCellsOrGaps(centres: ArrayLike<number>, from: number, to: number, count: number): Int32Array {
   const usual = usualSpacing(centres);
-  const cells = new Int32Array(count);
   const slack = 1e-9 * Math.abs(to - from);
-  for (let pixel = 0; pixel < count; pixel++) {
-    const position = from + ((to - from) * (pixel + 0.5)) / count;
-    const cell = nearestCell(centres, position);
+  return nearestCells(centres, from, to, count).map((cell, pixel) => {
+    const position = pixelCentre(pixel, from, to, count);
     const distance = Math.abs(position - centres[cell]);
     const neighbour = position < centres[cell] ? cell - 1 : cell + 1;
     const isEnd = neighbour < 0 || neighbour >= centres.length;
-    const isGap = !isEnd && Math.abs(centres[neighbour] - centres[cell]) > gapSteps * usual;
-    cells[pixel] = (isEnd || isGap) && distance > usual / 2 + slack ? -1 : cell;
-  }
-  return cells;
+    const isGap = isEnd || Math.abs(centres[neighbour] - centres[cell]) > gapSteps * usual;
+    return isGap && distance > usual / 2 + slack ? -1 : cell;
+  });
+}
+
+function pixelCentre(pixel: number, from: number, to: number, count: number): number {
+  return from + ((to - from) * (pixel + 0.5)) / count;
 }
 
 /** Values of the cells named by `rowCells` and `columnCells`; -1 gives NaN. `columns` is the width of `values`. */

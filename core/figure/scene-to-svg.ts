@@ -102,9 +102,7 @@ function textElement(mark: TextMark): string {
   const place = `x="${number(mark.x)}" y="${number(mark.y)}"`;
   const anchor = mark.anchor === "start" ? "" : ` text-anchor="${mark.anchor}"`;
   const weight = mark.weight === 400 ? "" : ` font-weight="${mark.weight}"`;
-  const turn = mark.rotate
-    ? ` transform="rotate(${number(mark.rotate)} ${number(mark.x)} ${number(mark.y)})"`
-    : "";
+  const turn = mark.rotate ? ` transform="rotate(${number(mark.rotate)} ${number(mark.x)} ${number(mark.y)})"` : "";
   const runs = superscriptRuns(mark.text);
   // Raised figures lose their meaning to a reader by ear or by search: the label keeps the text as written.
   const label = runs.some((run) => run.raised) ? ` aria-label="${xmlText(mark.text)}"` : "";

@@ -7,9 +7,7 @@ export interface Tick {
 }
 
 const decimalSteps = [1, 2, 5] as const;
-const degreeSteps = [
-  0.01, 0.02, 0.05, 0.1, 0.2, 0.25, 0.5, 1, 2, 5, 10, 15, 20, 30, 45, 60, 90, 180,
-] as const;
+const degreeSteps = [0.01, 0.02, 0.05, 0.1, 0.2, 0.25, 0.5, 1, 2, 5, 10, 15, 20, 30, 45, 60, 90, 180] as const;
 
 /** The smallest of 1, 2 or 5 × 10ⁿ that cuts `span` into at most `most` pieces. Common practice, no source. */
 export function niceStep(span: number, most: number): number {

@@ -1,4 +1,11 @@
-import { type Calendar, type CalendarDate, dateExists, dateFromDays, daysFromDate, daysInMonth } from "../model/calendar";
+import {
+  type Calendar,
+  type CalendarDate,
+  dateExists,
+  dateFromDays,
+  daysFromDate,
+  daysInMonth,
+} from "../model/calendar";
 import type { Tick } from "./ticks";
 
 export const monthNames = [

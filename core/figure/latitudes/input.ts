@@ -1,0 +1,67 @@
+import type { Axis, TimeAxis } from "../../model/axis";
+import type { BandResponse, Plane, Profile, SpectrumResult } from "../../model/results";
+
+/** What the figure of the latitude row is drawn from. SI units throughout. */
+export interface LatitudesInput {
+  readonly record: RecordAxes;
+  readonly result: LatitudesValues;
+  /** Left out: the period panel shows the band and its response alone. */
+  readonly spectrum?: Pick<SpectrumResult, "frequency" | "density">;
+  readonly quantity: {
+    readonly title: string;
+    /** SI units as CF writes them. */
+    readonly units: string;
+    /** Signed quantities get the diverging colour map. */
+    readonly signed: boolean;
+  };
+  readonly band: { readonly shortestDays: number; readonly longestDays: number; readonly filter: string };
+  /** "20–41° N, 150–125° W". */
+  readonly region: string;
+  /** "Grid A · 0.125° · 3 d". */
+  readonly grid: string;
+  /** Date of the map, "24 May 2032". */
+  readonly date: string;
+}
+
+/** Axes of the record and what each date holds; latitudes and longitudes ascend. */
+export interface RecordAxes {
+  readonly latitude: Axis;
+  readonly longitude: Axis;
+  readonly time: TimeAxis;
+  /** 1 where the date has at least one valid cell. */
+  readonly hasData: Uint8Array;
+  /** Share of ocean cells valid, by date. */
+  readonly coverage: Float64Array;
+  /** 1 for cells that ever hold a value; row-major latitude × longitude. */
+  readonly ocean: Uint8Array;
+}
+
+/** Fields and profiles of one quantity, date and band. */
+export interface LatitudesValues {
+  readonly choice: { readonly inBand: boolean };
+  readonly dateIndex: number;
+  readonly map: Plane;
+  readonly onDate: Float64Array;
+  readonly profile: Pick<Profile, "mean" | "half95">;
+  readonly latitudeTime: Plane;
+  readonly columnDates: Int32Array;
+  /** 1 where the filtered value rests on too little data, by date. */
+  readonly filterEnd: Uint8Array;
+  readonly limits: readonly [lower: number, upper: number];
+  readonly response: Pick<BandResponse, "frequency" | "amplitude" | "daysLostEachEnd">;
+}
+
+/** Room for a figure in CSS pixels. */
+export interface FigureSize {
+  readonly width: number;
+  readonly height: number;
+  /** Size of headings; ticks and notes are nine tenths of it. Left out: by the width. */
+  readonly textSize?: number;
+  /** "row": the three panels alone, without the period spectrum and the days with data. */
+  readonly arrangement?: "full" | "row";
+}
+
+/** Whether values shown went through the study's band. */
+export function isFiltered(input: LatitudesInput): boolean {
+  return input.result.choice.inBand && input.band.filter !== "none";
+}

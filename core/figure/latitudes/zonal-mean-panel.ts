@@ -1,0 +1,90 @@
+import type { Theme } from "../colour/theme";
+import { displayUnits } from "../display-units";
+import { bandPath, linePath, pathMark, polylinePath } from "../marks";
+import { pixelX, pixelY } from "../panel";
+import type { Mark, PanelFrame } from "../scene";
+import { linearTicks } from "../ticks";
+import { bottomTickMarks, dataWidth, frameMark, groundMark, hairWidth, roomiestTicks } from "./axis-marks";
+import type { LatitudesInput } from "./input";
+import type { LatitudesLayout } from "./layout";
+import { latitudeScale } from "./map-panel";
+
+/** Room beside the widest excursion, as a share of it. */
+const headroom = 1.08;
+
+/** The horizontal scale is in SI units: symmetric about zero for a signed quantity, from zero for a magnitude. */
+export function zonalMeanPanel(input: LatitudesInput, layout: LatitudesLayout): PanelFrame {
+  const reach = headroom * widestExcursion(input) || 1;
+  const lower = input.quantity.signed ? -reach : 0;
+  return {
+    id: "zonal-mean",
+    ...layout.zonalMean,
+    horizontal: { kind: "linear", from: lower, to: reach },
+    vertical: latitudeScale(input),
+  };
+}
+
+function widestExcursion({ result }: LatitudesInput): number {
+  const { mean, half95 } = result.profile;
+  let widest = 0;
+  for (let row = 0; row < mean.length; row++) {
+    for (const value of [Math.abs(mean[row]) + half95[row], Math.abs(mean[row]), Math.abs(result.onDate[row])]) {
+      if (value > widest && Number.isFinite(value)) widest = value;
+    }
+  }
+  return widest;
+}
+
+/** Mean over the period in ink with its 95 % band, the date's zonal mean in amber. Breaks where a value is NaN. */
+export function zonalMeanMarks(
+  input: LatitudesInput,
+  layout: LatitudesLayout,
+  panel: PanelFrame,
+  theme: Theme,
+): Mark[] {
+  const { mean, half95 } = input.result.profile;
+  const ys = input.record.latitude.values.map((latitude) => pixelY(panel, latitude));
+  const xs = (value: (row: number) => number) => Float64Array.from(ys, (_, row) => pixelX(panel, value(row)));
+  const meanXs = xs((row) => mean[row]);
+  const band = bandPath(
+    xs((row) => mean[row] - half95[row]),
+    xs((row) => mean[row] + half95[row]),
+    ys,
+  );
+  const zero = pixelX(panel, 0);
+  const clip = panel.id;
+  return [
+    groundMark(panel, theme),
+    pathMark("zonal-mean-band", band, { fill: theme.spread, clip }),
+    pathMark("zonal-mean-zero", linePath(zero, panel.y, zero, panel.y + panel.height), {
+      stroke: theme.rule,
+      strokeWidth: hairWidth,
+      clip,
+    }),
+    pathMark(
+      "zonal-mean-date",
+      polylinePath(
+        xs((row) => input.result.onDate[row]),
+        ys,
+      ),
+      {
+        stroke: theme.amber,
+        strokeWidth: dataWidth,
+        clip,
+      },
+    ),
+    pathMark("zonal-mean-line", polylinePath(meanXs, ys), { stroke: theme.ink, strokeWidth: dataWidth, clip }),
+    frameMark(panel, theme),
+    ...zonalTicks(input, layout, panel, theme),
+  ];
+}
+
+function zonalTicks(input: LatitudesInput, layout: LatitudesLayout, panel: PanelFrame, theme: Theme): Mark[] {
+  const { scale } = displayUnits(input.quantity.units);
+  const { from, to } = panel.horizontal;
+  const make = (most: number) =>
+    linearTicks(from * scale, to * scale, most).map(({ value, label }) => ({ value: value / scale, label }));
+  const ticks = roomiestTicks(panel, make, layout.sizes);
+  const within = [panel.x - 2, panel.x + panel.width + 2] as const;
+  return bottomTickMarks(panel, ticks, within, theme, layout.sizes);
+}
