@@ -1,0 +1,32 @@
+import { pixelX, valueAtX } from "../../core/figure/panel";
+import type { PanelFrame } from "../../core/figure/scene";
+import { type BandEdge, type BandEdges, type BandLimits, edgeRange } from "../state/band-edges";
+import { BandHandle } from "./BandHandle";
+
+interface BandHandlesProps {
+  readonly panel: PanelFrame;
+  readonly band: BandEdges;
+  readonly limits: BandLimits;
+  readonly onMove: (edge: BandEdge, days: number) => void;
+  readonly onEnd: () => void;
+}
+
+const edges: readonly BandEdge[] = ["longestDays", "shortestDays"];
+
+/** Both ends of the pass band on the spectrum, whose horizontal scale is the period in days. */
+export function BandHandles({ panel, band, limits, onMove, onEnd }: BandHandlesProps) {
+  const inside = (x: number): number => Math.min(panel.x + panel.width, Math.max(panel.x, x));
+  return edges.map((edge) => (
+    <BandHandle
+      key={edge}
+      edge={edge}
+      days={band[edge]}
+      range={edgeRange(band, edge, limits)}
+      panel={panel}
+      x={inside(pixelX(panel, band[edge]))}
+      daysAt={(x) => valueAtX(panel, inside(x))}
+      onMove={(days) => onMove(edge, days)}
+      onEnd={onEnd}
+    />
+  ));
+}

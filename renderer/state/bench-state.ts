@@ -1,0 +1,77 @@
+import type {
+  FieldChoice,
+  LatitudesResult,
+  OpenStudy,
+  RecognisedFile,
+  RecordOverview,
+  SpectrumResult,
+} from "../../core/contract/engine";
+import type { Progress } from "../../core/contract/job";
+import type { DoorKind } from "../../core/contract/wire";
+import type { LinkState } from "../bridge/engine-link";
+import type { Cursor } from "./cursor";
+import type { History } from "./history";
+import type { Notice } from "./notices";
+
+/** A result together with the study and record it came from, so that what is drawn is always of one piece. */
+export interface Picture {
+  readonly open: OpenStudy;
+  readonly grid: string;
+  readonly record: RecordOverview;
+  readonly result: LatitudesResult;
+}
+
+export interface BenchState {
+  readonly link: LinkState;
+  /** Which way the engine is reached; null until it has answered. */
+  readonly door: DoorKind | null;
+  readonly view: string;
+  readonly studies: History<OpenStudy> | null;
+  /** The study as it is on disk; differs from the present one where there are edits to save. */
+  readonly saved: OpenStudy | null;
+  readonly files: readonly RecognisedFile[];
+  readonly grid: string;
+  readonly choice: FieldChoice;
+  readonly cursor: Cursor | null;
+  readonly playing: boolean;
+  readonly record: RecordOverview | null;
+  readonly picture: Picture | null;
+  readonly spectrum: SpectrumResult | null;
+  /** Opening and reading; null when nothing is under way. */
+  readonly loading: Progress | null;
+  /** Why there is no record, as a sentence; null while all is well. */
+  readonly loadFault: string | null;
+  readonly writing: Progress | null;
+  readonly notices: readonly Notice[];
+  /** Most columns the latitude-time picture can show. */
+  readonly columns: number;
+  readonly keysShown: boolean;
+}
+
+export const firstState: BenchState = {
+  link: "connecting",
+  door: null,
+  view: "latitudes",
+  studies: null,
+  saved: null,
+  files: [],
+  grid: "",
+  choice: { quantity: "u", inBand: true },
+  cursor: null,
+  playing: false,
+  record: null,
+  picture: null,
+  spectrum: null,
+  loading: null,
+  loadFault: null,
+  writing: null,
+  notices: [],
+  columns: 600,
+  keysShown: false,
+};
+
+/** What the parts of the bench share: reading and replacing the state, and the engine's calls. */
+export interface BenchStore {
+  get(): BenchState;
+  set(change: Partial<BenchState>): void;
+}

@@ -1,0 +1,36 @@
+import type { OpenStudy } from "../../core/contract/engine";
+import type { BackgroundSettings, BandSettings, GeostrophySettings, Period, Region } from "../../core/study/schema";
+
+/** Each returns a new study with one part replaced; the one given is left as it was. */
+export function withBand(open: OpenStudy, band: BandSettings): OpenStudy {
+  return band === open.study.band ? open : { ...open, study: { ...open.study, band } };
+}
+
+export function withGeostrophy(open: OpenStudy, change: Partial<GeostrophySettings>): OpenStudy {
+  return { ...open, study: { ...open.study, geostrophy: { ...open.study.geostrophy, ...change } } };
+}
+
+export function withBackground(open: OpenStudy, change: Partial<BackgroundSettings>): OpenStudy {
+  return { ...open, study: { ...open.study, background: { ...open.study.background, ...change } } };
+}
+
+/** `undefined` takes the part out: all of the first grid. */
+export function withExtent(open: OpenStudy, region: Region | undefined, period: Period | undefined): OpenStudy {
+  const { region: _region, period: _period, ...rest } = open.study;
+  return { ...open, study: { ...rest, ...(region ? { region } : {}), ...(period ? { period } : {}) } };
+}
+
+/** True where two studies read the same cells and dates of the same files. */
+export function sameRecord(a: OpenStudy, b: OpenStudy): boolean {
+  if (a === b) return true;
+  return recordKey(a) === recordKey(b);
+}
+
+function recordKey({ folder, study }: OpenStudy): string {
+  return JSON.stringify([folder, study.grids, study.region ?? null, study.period ?? null]);
+}
+
+/** Whether background is removed: on where any of its parts is. */
+export function backgroundOn(background: BackgroundSettings): boolean {
+  return background.mean || background.trend || background.annual || background.semiannual;
+}

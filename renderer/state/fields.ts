@@ -1,0 +1,90 @@
+import type { Engine, LatitudesResult, OpenStudy, RecordOverview, SpectrumResult } from "../../core/contract/engine";
+import type { BenchStore } from "./bench-state";
+import { latestWins } from "./latest-wins";
+
+/** Keeps the drawn results in step with study, field choice and date. */
+export interface Fields {
+  /** Asks for whatever the present state lacks. */
+  refresh(): void;
+  stop(): void;
+  readonly busy: boolean;
+}
+
+interface LatitudesQuestion {
+  readonly open: OpenStudy;
+  readonly record: RecordOverview;
+  readonly request: Parameters<Engine["latitudes"]>[0];
+}
+
+/** One queue for the latitudes, one for the spectrum; each keeps at most one call in flight. */
+export function fields(store: BenchStore, engine: Engine, fail: (error: unknown) => void): Fields {
+  let asked = "";
+  let askedStudy: OpenStudy | null = null;
+  let askedRecord: RecordOverview | null = null;
+  let askedSpectrum = "";
+
+  const latitudes = latestWins<LatitudesQuestion, LatitudesResult>({
+    run: ({ request }, signal) => engine.latitudes(request, { signal }),
+    deliver: (result, { open, record, request }) => {
+      if (record === store.get().record) store.set({ picture: { open, grid: request.grid, record, result } });
+    },
+    fail: (error) => {
+      asked = "";
+      fail(error);
+    },
+  });
+
+  const spectrum = latestWins<Parameters<Engine["spectrum"]>[0], SpectrumResult>({
+    run: (request, signal) => engine.spectrum(request, { signal }),
+    deliver: (result) => store.set({ spectrum: result }),
+    fail: (error) => {
+      askedSpectrum = "";
+      fail(error);
+    },
+  });
+
+  const refreshLatitudes = (): void => {
+    const { studies, record, grid, choice, cursor, columns } = store.get();
+    if (!studies || !record || !cursor) return;
+    const open = studies.present;
+    const key = JSON.stringify([grid, choice, cursor.dateIndex, columns]);
+    if (key === asked && open === askedStudy && record === askedRecord) return;
+    asked = key;
+    askedStudy = open;
+    askedRecord = record;
+    latitudes.ask({ open, record, request: { open, grid, choice, dateIndex: cursor.dateIndex, columns } });
+  };
+
+  const refreshSpectrum = (): void => {
+    const { studies, record, grid, choice } = store.get();
+    if (!studies || !record) return;
+    const open = studies.present;
+    const key = spectrumKey(open, grid, choice.quantity);
+    if (key === askedSpectrum) return;
+    askedSpectrum = key;
+    spectrum.ask({ open, grid, quantity: choice.quantity });
+  };
+
+  return {
+    refresh() {
+      refreshLatitudes();
+      refreshSpectrum();
+    },
+    stop() {
+      latitudes.stop();
+      spectrum.stop();
+      asked = "";
+      askedStudy = null;
+      askedSpectrum = "";
+    },
+    get busy() {
+      return latitudes.busy;
+    },
+  };
+}
+
+/** What a spectrum depends on: everything but the band, so that dragging an edge does not ask for it again. */
+function spectrumKey(open: OpenStudy, grid: string, quantity: string): string {
+  const { grids, region, period, geostrophy, background } = open.study;
+  return JSON.stringify([open.folder, grids, region, period, geostrophy, background, grid, quantity]);
+}

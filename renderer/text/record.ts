@@ -1,0 +1,64 @@
+import type { RecordOverview } from "../../core/contract/engine";
+import {
+  decimalsForStep,
+  formatCount,
+  formatLatitudeRange,
+  formatLongitudeRange,
+  formatNumber,
+  formatSignificant,
+} from "../../core/figure/format";
+import { formatDate } from "../../core/figure/time-ticks";
+
+import type { Study } from "../../core/study/schema";
+
+type RecordAxes = Pick<RecordOverview, "latitude" | "longitude" | "time">;
+
+/** A record in a line: "20–41° N, 150–125° W, 900 days". */
+export function recordText(record: RecordAxes): string {
+  const { time } = record;
+  const days = Math.round(time.values.length * Math.abs(time.step || 1));
+  return `${boxText(record)} · ${formatCount(days)} days`;
+}
+
+/** The corners of a record's region, "20.5–40.5° N, 150–125° W": centres of the outermost cells. */
+export function boxText({ latitude, longitude }: RecordAxes): string {
+  return `${formatLatitudeRange(...ends(latitude.values))}, ${formatLongitudeRange(...ends(longitude.values))}`;
+}
+
+function ends(values: Float64Array): [number, number] {
+  const last = values[values.length - 1];
+  return values[0] <= last ? [values[0], last] : [last, values[0]];
+}
+
+/** A grid's name with its spacing and sampling: "Grid A · 0.125° · 3 d". */
+export function gridText(study: Study, id: string, record: RecordAxes | null): string {
+  const label = study.grids.find((grid) => grid.id === id)?.label ?? "";
+  const name = label === "" ? `Grid ${id}` : label;
+  if (!record) return name;
+  const degrees = Math.abs(record.latitude.step);
+  const days = Math.abs(record.time.step);
+  const parts = [name];
+  if (degrees > 0) parts.push(`${formatSignificant(degrees, 3)}°`);
+  if (days > 0) parts.push(`${formatSignificant(days, 3)} d`);
+  return parts.join(" · ");
+}
+
+/** First and last date of a time axis and how many there are. */
+export function periodText(time: RecordOverview["time"]): string {
+  const { values, calendar } = time;
+  return `${formatDate(calendar, values[0])} to ${formatDate(calendar, values[values.length - 1])}`;
+}
+
+/** "every 3 days", "daily", "one date". */
+export function samplingText(time: RecordOverview["time"]): string {
+  const step = Math.abs(time.step);
+  if (!Number.isFinite(step)) return "one date";
+  return step === 1 ? "daily" : `every ${formatNumber(step, Math.min(2, decimalsForStep(step)))} days`;
+}
+
+/** Bytes in the unit a person would say. */
+export function bytesText(bytes: number): string {
+  const units = ["bytes", "kB", "MB", "GB", "TB"];
+  const power = bytes > 0 ? Math.min(4, Math.floor(Math.log10(bytes) / 3)) : 0;
+  return `${formatNumber(bytes / 1000 ** power, power < 2 ? 0 : 1)} ${units[power]}`;
+}
