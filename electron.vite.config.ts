@@ -1,3 +1,4 @@
+import { readFileSync } from "node:fs";
 import path from "node:path";
 import react from "@vitejs/plugin-react";
 import { defineConfig } from "electron-vite";
@@ -13,6 +14,10 @@ const mainEntries = {
   worker: from("main/engine/worker.ts"),
 };
 
+// The command is run by its own name. A first line the source has is kept by the bundler; twice it would not parse.
+const firstLine = "#!/usr/bin/env node";
+const hasFirstLine = readFileSync(mainEntries.strake, "utf8").startsWith("#!");
+
 export default defineConfig({
   main: {
     build: {
@@ -26,7 +31,7 @@ export default defineConfig({
           format: "es",
           entryFileNames: "[name].js",
           chunkFileNames: "chunks/[name]-[hash].js",
-          banner: (chunk) => (chunk.isEntry && chunk.name === "strake" ? "#!/usr/bin/env node" : ""),
+          banner: (chunk) => (chunk.isEntry && chunk.name === "strake" && !hasFirstLine ? firstLine : ""),
         },
       },
     },
