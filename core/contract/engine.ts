@@ -65,8 +65,10 @@ export interface LatitudesResult {
   readonly columnDates: Int32Array;
   /** Dates whose filtered value rests on less than 90 % of the filter's weight. 1 = filter end or gap, by date. */
   readonly filterEnd: Uint8Array;
-  /** Symmetric colour limit for map and latitude–time picture together (98th percentile of magnitude over the record), in SI units. */
+  /** Colour limits of the map, in SI units: the same for every date of the field, so that time can play. */
   readonly limits: readonly [number, number];
+  /** Colour limits of the latitude–time picture: zonal means are weaker than the map they average. */
+  readonly pictureLimits: readonly [number, number];
   readonly response: BandResponse;
 }
 

@@ -151,11 +151,11 @@ export function unpack(
   at = 0,
 ): void {
   const { scale, offset, type, fills, validMin, validMax } = packing;
-  const constructor = arrayTypes[type];
+  const arrayType = arrayTypes[type];
   // _Unsigned reads the same bits with the other signedness.
-  const values = (raw.constructor === constructor
+  const values = (raw.constructor === arrayType
     ? raw
-    : new constructor(raw.buffer as ArrayBuffer, raw.byteOffset, raw.length)) as unknown as ArrayLike<Packed>;
+    : new arrayType(raw.buffer as ArrayBuffer, raw.byteOffset, raw.length)) as unknown as ArrayLike<Packed>;
   const isBig = raw.BYTES_PER_ELEMENT === 8 && !(raw instanceof Float64Array);
   const lower = validMin ?? (isBig ? -(2n ** 64n) : Number.NEGATIVE_INFINITY);
   const upper = validMax ?? (isBig ? 2n ** 64n : Number.POSITIVE_INFINITY);

@@ -59,7 +59,8 @@ async function swapIn(stage: string, place: string, aside: string, overwrite: bo
   if (replaces) await rm(aside, { recursive: true, force: true });
 }
 
-async function refuseExisting(place: string, overwrite: boolean): Promise<void> {
+/** Throws Fault "output" where `place` is a file, or a folder that may not be replaced. */
+export async function refuseExisting(place: string, overwrite: boolean): Promise<void> {
   const kind = await kindOf(place);
   if (kind === "nothing" || (kind === "folder" && overwrite)) return;
   throw new Fault({

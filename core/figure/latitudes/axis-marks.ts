@@ -89,11 +89,16 @@ export function labelsKeepApart(panel: PanelFrame, ticks: readonly Tick[], size:
 /** More labels than this under one panel crowd it, however wide it is. Common practice, no source. */
 export const mostLabels = 12;
 
-/** The densest of the tick lists that `make` gives whose labels keep apart. */
-export function roomiestTicks(panel: PanelFrame, make: (most: number) => Tick[], sizes: TypeSizes): Tick[] {
+/** The densest of the tick lists that `make` gives whose labels keep `gap` pixels apart. */
+export function roomiestTicks(
+  panel: PanelFrame,
+  make: (most: number) => Tick[],
+  sizes: TypeSizes,
+  gap: number,
+): Tick[] {
   for (let count = mostLabels; count >= 1; count--) {
     const ticks = make(count);
-    if (labelsKeepApart(panel, ticks, sizes.small, 0.6 * sizes.small)) return ticks;
+    if (labelsKeepApart(panel, ticks, sizes.small, gap)) return ticks;
   }
   return [];
 }

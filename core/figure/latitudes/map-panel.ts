@@ -60,7 +60,12 @@ export function mapMarks(
   const ocean = Uint8Array.from(gatherCells(input.record.ocean, map.columns, rows, columns));
   const pixels = paint(values, limits, colourMapOf(input, theme), { missing: theme.missing, land: theme.land, ocean });
   const { from: west, to: east } = panel.horizontal;
-  const ticks = roomiestTicks(panel, (most) => longitudeTicks(west, east, most), layout.sizes);
+  const ticks = roomiestTicks(
+    panel,
+    (most) => longitudeTicks(west, east, most),
+    layout.sizes,
+    1.5 * layout.sizes.small,
+  );
   const within = [0, panel.x + panel.width + layout.panelGap / 2] as const;
   return [
     rasterMark("map-raster", panel, columns.length, rows.length, pixels),

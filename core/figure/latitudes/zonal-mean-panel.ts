@@ -84,7 +84,7 @@ function zonalTicks(input: LatitudesInput, layout: LatitudesLayout, panel: Panel
   const { from, to } = panel.horizontal;
   const make = (most: number) =>
     linearTicks(from * scale, to * scale, most).map(({ value, label }) => ({ value: value / scale, label }));
-  const ticks = roomiestTicks(panel, make, layout.sizes);
+  const ticks = roomiestTicks(panel, make, layout.sizes, 0.6 * layout.sizes.small);
   const within = [panel.x - 2, panel.x + panel.width + 2] as const;
   return bottomTickMarks(panel, ticks, within, theme, layout.sizes);
 }

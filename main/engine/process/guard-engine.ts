@@ -58,11 +58,13 @@ export function guardEngine(engine: Engine, grants: Grants): Engine {
       throw studyFault(read.error.issues[0]?.path.join(".") || "study", read.error.issues[0]?.message ?? "");
     if (!path.isAbsolute(open.folder))
       throw studyFault("folder of the study", "a path that does not start at the root");
+    // Without its steps up the folder means the same to whoever joins a name to it, links in it or not.
+    const folder = path.resolve(open.folder);
     if (open.path !== "") await grants.readable(open.path);
     for (const source of [...read.data.grids, ...read.data.tracks]) {
-      for (const pattern of source.files) await checkPattern(open.folder, pattern);
+      for (const pattern of source.files) await checkPattern(folder, pattern);
     }
-    return { study: read.data, folder: open.folder, path: open.path };
+    return { study: read.data, folder, path: open.path };
   }
 
   return {

@@ -3,7 +3,7 @@ import { backgroundTask } from "./background";
 import { fieldPlanesTask } from "./field-planes";
 import { limitsTask } from "./limits";
 import { mapTask } from "./map";
-import { meansTask } from "./means";
+import { momentsTask } from "./moments";
 import { pictureTask } from "./picture";
 import { readTask } from "./read";
 import { reduceTask } from "./reduce";
@@ -20,7 +20,7 @@ export const tasks = {
   zonalBand: zonalBandTask,
   limits: limitsTask,
   spectrum: spectrumTask,
-  means: meansTask,
+  moments: momentsTask,
   fieldPlanes: fieldPlanesTask,
 } satisfies Record<string, (args: never, job: JobFlags) => unknown>;
 

@@ -18,14 +18,10 @@ export const classicTypes: Readonly<Record<number, Exclude<StoredType, "string">
 
 /** Turns big-endian bytes, which it may overwrite, into a typed array. `bytes` starts at a multiple of the value size. */
 export function fromBigEndian(bytes: Uint8Array, type: Exclude<StoredType, "string">): NumericArray {
-  const constructor = arrayTypes[type];
+  const arrayType = arrayTypes[type];
   const view = Buffer.from(bytes.buffer, bytes.byteOffset, bytes.byteLength);
-  if (constructor.BYTES_PER_ELEMENT === 2) view.swap16();
-  if (constructor.BYTES_PER_ELEMENT === 4) view.swap32();
-  if (constructor.BYTES_PER_ELEMENT === 8) view.swap64();
-  return new constructor(
-    bytes.buffer as ArrayBuffer,
-    bytes.byteOffset,
-    bytes.byteLength / constructor.BYTES_PER_ELEMENT,
-  );
+  if (arrayType.BYTES_PER_ELEMENT === 2) view.swap16();
+  if (arrayType.BYTES_PER_ELEMENT === 4) view.swap32();
+  if (arrayType.BYTES_PER_ELEMENT === 8) view.swap64();
+  return new arrayType(bytes.buffer as ArrayBuffer, bytes.byteOffset, bytes.byteLength / arrayType.BYTES_PER_ELEMENT);
 }

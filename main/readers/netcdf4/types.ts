@@ -17,6 +17,6 @@ export function storedType(metadata: Metadata): StoredType | null {
 
 /** A copy of `bytes` (little-endian, as the library hands them over) as a typed array. */
 export function fromLittleEndian(bytes: Uint8Array, type: Exclude<StoredType, "string">): NumericArray {
-  const constructor = arrayTypes[type];
-  return new constructor(bytes.slice().buffer as ArrayBuffer);
+  const arrayType = arrayTypes[type];
+  return new arrayType(bytes.slice().buffer as ArrayBuffer);
 }

@@ -1,0 +1,22 @@
+import { formatLatitudeRange, formatLongitudeRange, formatSignificant } from "./format";
+import type { RecordAxes } from "./latitudes/input";
+
+/** The corners of a record's region, "20.5–40.5° N, 150–125° W": centres of the outermost cells. */
+export function boxText({ latitude, longitude }: Pick<RecordAxes, "latitude" | "longitude">): string {
+  return `${formatLatitudeRange(...ends(latitude.values))}, ${formatLongitudeRange(...ends(longitude.values))}`;
+}
+
+function ends(values: Float64Array): [number, number] {
+  const last = values[values.length - 1];
+  return values[0] <= last ? [values[0], last] : [last, values[0]];
+}
+
+/** A grid's name with its spacing and sampling: "Grid A · 0.125° · 3 d". */
+export function gridText(name: string, { latitude, time }: Pick<RecordAxes, "latitude" | "time">): string {
+  const degrees = Math.abs(latitude.step);
+  const days = Math.abs(time.step);
+  const parts = [name];
+  if (degrees > 0) parts.push(`${formatSignificant(degrees, 3)}°`);
+  if (days > 0) parts.push(`${formatSignificant(days, 3)} d`);
+  return parts.join(" · ");
+}

@@ -1,0 +1,99 @@
+import type { OpenStudy } from "../../../core/contract/engine";
+import type { Profile, SpectrumResult } from "../../../core/model/results";
+import { quantities } from "../../../core/ocean/quantities/index";
+import { meanProfile } from "../../../core/study/profile";
+import type { Job } from "../job";
+import { type FieldStages, fieldStages, pictureSeries } from "../latitudes";
+import type { LoadedRecord } from "../load-record";
+import type { WorkerPool } from "../pool";
+import { spectrumResult } from "../spectrum";
+import type { FieldArguments } from "../tasks/field";
+import { addMoments, type Moments } from "../tasks/moments";
+import type { Workspace } from "../workspace";
+
+/** Quantities that a run writes as maps. */
+export const mappedQuantities = quantities.filter(({ id }) => ["height", "u", "v", "vorticity"].includes(id));
+
+/** Dates summed at a time; fixed, so that sums do not depend on the number of workers. */
+const datesInBlock = 32;
+
+/** A zonal-mean series of u over every date, and its profile. */
+export interface ZonalAnalysis {
+  /** `series[row * dates + t]`. */
+  readonly series: Float64Array;
+  readonly profile: Profile;
+}
+
+/** All that a run computes, before it is written. */
+export interface Analysis {
+  readonly open: OpenStudy;
+  readonly grid: string;
+  readonly loaded: LoadedRecord;
+  readonly stages: FieldStages;
+  readonly asItStands: ZonalAnalysis;
+  readonly moments: Moments;
+  /** null for a study without a band. */
+  readonly band: { readonly zonal: ZonalAnalysis; readonly moments: Moments } | null;
+  /** null where the record is too short or irregular for one. */
+  readonly spectrum: SpectrumResult | null;
+}
+
+/** Computes what a run writes for the study's first grid. */
+export async function analyse(workspace: Workspace, open: OpenStudy, job: Job): Promise<Analysis> {
+  const grid = open.study.grids[0].id;
+  const hasBand = open.study.band.filter !== "none";
+  const stages = await fieldStages(workspace, open, grid, hasBand, job);
+  const loaded = await workspace.record(open, grid, job);
+  const raw: FieldArguments = {
+    record: stages.record,
+    geostrophy: open.study.geostrophy,
+    background: stages.background,
+    quantity: "u",
+    inBand: false,
+    filter: stages.filter,
+  };
+  const banded = { ...raw, inBand: true };
+  const { pool } = workspace;
+  return {
+    open,
+    grid,
+    loaded,
+    stages,
+    asItStands: await zonalAnalysis(pool, stages, raw, job),
+    moments: await momentsOf(pool, raw, "Averaging maps", job),
+    band: hasBand
+      ? {
+          zonal: await zonalAnalysis(pool, stages, banded, job),
+          moments: await momentsOf(pool, banded, "Averaging maps in the band", job),
+        }
+      : null,
+    spectrum: hasBand ? await spectrumResult(workspace, open, grid, "u", job) : null,
+  };
+}
+
+async function zonalAnalysis(
+  pool: WorkerPool,
+  stages: FieldStages,
+  field: FieldArguments,
+  job: Job,
+): Promise<ZonalAnalysis> {
+  const { dates, rows } = stages.record.cube;
+  const every = Int32Array.from({ length: dates }, (_, t) => t);
+  const series = await pictureSeries(pool, stages, field, every, job);
+  return { series, profile: meanProfile(series, rows, dates, field.inBand) };
+}
+
+async function momentsOf(pool: WorkerPool, field: FieldArguments, step: string, job: Job): Promise<Moments> {
+  const { dates } = field.record.cube;
+  const ids = mappedQuantities.map(({ id }) => id);
+  const blocks = await job.step(step, dates, () =>
+    pool.share(
+      "moments",
+      dates,
+      (range) => ({ ...field, quantities: ids, dates: range }),
+      job,
+      Math.ceil(dates / datesInBlock),
+    ),
+  );
+  return addMoments(blocks);
+}

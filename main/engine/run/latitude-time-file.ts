@@ -1,0 +1,81 @@
+import { weightShare } from "../../../core/numeric/band-filter";
+import { quantityById } from "../../../core/ocean/quantities/evaluate";
+import { type NetcdfVariable, writeNetcdf4 } from "../../writers/netcdf4";
+import type { Analysis } from "./analysis";
+import { globalAttributes, latitudeAttributes, timeAttributes, variableAttributes } from "./cf-attributes";
+
+/** Writes latitude-time.nc: zonal means of u on every date, as they stand and in the band, and what they rest on. */
+export async function writeLatitudeTime(path: string, analysis: Analysis): Promise<void> {
+  const { record, filter } = analysis.stages;
+  const { rows, dates } = record.cube;
+  const u = quantityById("u");
+  const { reference } = analysis.loaded.index.height;
+  const { shortestDays, longestDays } = analysis.open.study.band;
+  const zonal = (name: string, series: Float64Array, longName: string, isWhole: boolean): NetcdfVariable => {
+    const { standard_name: standardName, ...rest } = variableAttributes(u, reference, {
+      cell_methods: "longitude: mean",
+    });
+    return {
+      name,
+      type: "float64",
+      dimensions: ["time", "latitude"],
+      values: transposed(series, rows, dates),
+      attributes: { ...rest, ...(isWhole && standardName ? { standard_name: standardName } : {}), long_name: longName },
+      fillValue: Number.NaN,
+    };
+  };
+  const along = (name: string, values: Float64Array, longName: string): NetcdfVariable => ({
+    name,
+    type: "float64",
+    dimensions: ["time"],
+    values,
+    attributes: { long_name: longName, units: "1" },
+    fillValue: Number.NaN,
+  });
+  await writeNetcdf4(path, {
+    dimensions: { time: dates, latitude: rows },
+    variables: [
+      {
+        name: "time",
+        type: "float64",
+        dimensions: ["time"],
+        values: record.time.values,
+        attributes: timeAttributes(analysis),
+      },
+      {
+        name: "latitude",
+        type: "float64",
+        dimensions: ["latitude"],
+        values: record.axes.latitude.values,
+        attributes: latitudeAttributes,
+      },
+      zonal("u", analysis.asItStands.series, "zonal mean of eastward velocity", true),
+      ...(analysis.band
+        ? [
+            zonal(
+              "u_band",
+              analysis.band.zonal.series,
+              `zonal mean of eastward velocity, periods of ${shortestDays} to ${longestDays} days`,
+              false,
+            ),
+          ]
+        : []),
+      along("coverage", analysis.loaded.coverage, "share of ocean cells with a height"),
+      ...(filter
+        ? [
+            along(
+              "filter_weight",
+              weightShare(filter, record.hasData),
+              "share of the filter's weight on dates with data",
+            ),
+          ]
+        : []),
+    ],
+    attributes: globalAttributes(analysis, "Zonal means through time"),
+  });
+}
+
+/** `series[row * dates + t]` as time-major. */
+function transposed(series: Float64Array, rows: number, dates: number): Float64Array {
+  return Float64Array.from(series, (_, i) => series[(i % rows) * dates + Math.floor(i / rows)]);
+}

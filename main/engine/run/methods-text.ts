@@ -1,0 +1,122 @@
+import { formatDay } from "../../../core/model/calendar";
+import { cautionsFor } from "../../../core/study/cautions";
+import { leastZonalCoverage } from "../../../core/study/reduction";
+import type { Study } from "../../../core/study/schema";
+import type { Analysis } from "./analysis";
+import { crossingPeriods } from "./half-amplitude";
+import { version } from "./version";
+
+/** methods.md: what was done, in sentences whose numbers are the study's own, with the papers to cite and the cautions. */
+export function methodsText(analysis: Analysis): string {
+  const { open, stages } = analysis;
+  const { study } = open;
+  const cautions = cautionsFor(study, stages.record).map(({ text }) => `- ${text}`);
+  return [
+    `# Methods${study.title ? `: ${study.title}` : ""}`,
+    "",
+    dataText(analysis),
+    "",
+    geostrophyText(study),
+    "",
+    backgroundText(study, analysis),
+    "",
+    bandText(study, analysis),
+    "",
+    `Zonal means weight cells by their width and need ${100 * leastZonalCoverage} % of a row's ocean cells. The 95 % interval of a mean over time uses Student's t with the effective sample size ${study.band.filter === "none" ? "" : "(as it stands: "}N(1 − r)/(1 + r) from the lag-one autocorrelation r (Leith 1973)${study.band.filter === "none" ? "" : "; in the band: from the products of the autocorrelations over all lags, Bretherton et al. 1999)"}.`,
+    "",
+    "## Cautions",
+    "",
+    ...cautions,
+    "",
+    "## References",
+    "",
+    ...references(study).map((entry) => `- ${entry}`),
+    "",
+    `Made with Strake ${version}.`,
+    "",
+  ].join("\n");
+}
+
+function dataText({ loaded, stages, grid }: Analysis): string {
+  const { record } = stages;
+  const { time, cube, hasData, axes } = record;
+  const { height, files } = loaded.index;
+  const dated = hasData.reduce((sum, flag) => sum + flag, 0);
+  const surface = {
+    geoid: "the geoid",
+    "mean-sea-level": "mean sea level",
+    ellipsoid: "the ellipsoid",
+    unknown: "an unstated surface",
+  };
+  const span = (values: Float64Array) => `${tidy(values[0])} to ${tidy(values[values.length - 1])}`;
+  return (
+    `Sea-surface height above ${surface[height.reference]} (variable ${height.name} of grid ${grid}, ${files.length} ${files.length === 1 ? "file" : "files"}) ` +
+    `on ${cube.rows} latitudes (${span(axes.latitude.values)}° N) and ${cube.columns} longitudes (${span(axes.longitude.values)}° E), ` +
+    `${cube.dates} dates from ${formatDay(time.calendar, time.values[0])} to ${formatDay(time.calendar, time.values[cube.dates - 1])}` +
+    `${cube.dates > 1 ? ` every ${tidy(time.step)} days` : ""}, ${dated} of them with data.`
+  );
+}
+
+function geostrophyText({ geostrophy }: Study): string {
+  const earth =
+    geostrophy.earth === "ellipsoid" ? "the WGS-84 ellipsoid" : `a sphere of radius ${geostrophy.radius / 1000} km`;
+  const gravity =
+    geostrophy.gravity === "latitude"
+      ? "gravity varying with latitude (IOC, SCOR and IAPSO 2010)"
+      : `gravity ${geostrophy.gravity} m s⁻²`;
+  return (
+    `Geostrophic velocity is the slope of height by ${geostrophy.stencil}-point centred differences (Fornberg 1988) on ${earth}, ` +
+    `with ${gravity} and a rotation rate of ${geostrophy.omega} rad s⁻¹. Beside gaps, land and the region's edge the stencil narrows ` +
+    `symmetrically, then becomes one-sided of second order. Rows within ${geostrophy.equatorDegrees}° of the equator are blank. ` +
+    "Relative vorticity is the curl on the same earth, the convergence of meridians included."
+  );
+}
+
+function backgroundText({ background }: Study, { stages }: Analysis): string {
+  if (stages.background.basis.names.length === 0) return "Nothing was taken off before filtering.";
+  const names = {
+    mean: "mean",
+    trend: "linear trend",
+    annual: "annual cycle",
+    semiannual: "semi-annual cycle",
+  } as const;
+  const removed = (Object.keys(names) as (keyof typeof names)[])
+    .filter((key) => background[key])
+    .map((key) => names[key]);
+  return `Before filtering, the ${listed(removed)} were fitted together by least squares over the dates with data and taken off. Maps and means that are not in the band keep them.`;
+}
+
+function bandText({ band }: Study, { stages }: Analysis): string {
+  const { filter, record } = stages;
+  if (!filter) return "No band-pass was applied.";
+  const { time, cube } = record;
+  const halves = crossingPeriods(filter, 0.5, time.step, cube.dates * time.step).map((days) => `${days.toFixed(1)}`);
+  return (
+    `Periods of ${band.shortestDays} to ${band.longestDays} days were kept by a Lanczos band-pass (Duchon 1979) of ${filter.halfWidth} weights a side, ` +
+    `${2 * filter.halfWidth + 1} in all; its response is one half in amplitude at ${listed(halves)} days. Missing dates get no weight and the weights ` +
+    "left are scaled to the same sum; dates without data stay blank. A value that rests on less than 90 % of the weight is marked. " +
+    "Heights are filtered first and differenced after, which is the same for a linear filter; where single cells of a map are missing " +
+    "the picture filters each latitude's zonal means, and the map each cell's own heights."
+  );
+}
+
+function references({ geostrophy, band }: Study): string[] {
+  return [
+    "Bretherton, C. S., et al. (1999). J. Climate 12, 1990–2009.",
+    ...(band.filter === "lanczos" ? ["Duchon, C. E. (1979). J. Appl. Meteor. 18, 1016–1022."] : []),
+    "Fornberg, B. (1988). Math. Comp. 51, 699–706.",
+    ...(geostrophy.gravity === "latitude"
+      ? ["IOC, SCOR and IAPSO (2010). The international thermodynamic equation of seawater – 2010. UNESCO."]
+      : []),
+    "Leith, C. E. (1973). J. Appl. Meteor. 12, 1066–1069.",
+  ];
+}
+
+function listed(words: readonly string[]): string {
+  if (words.length < 2) return words.join("");
+  return `${words.slice(0, -1).join(", ")} and ${words[words.length - 1]}`;
+}
+
+function tidy(value: number): string {
+  return String(Number(value.toFixed(4)));
+}

@@ -1,0 +1,60 @@
+import { join } from "node:path";
+import type { OpenStudy, RunSummaryPlace } from "../../../core/contract/engine";
+import { figures } from "../../../core/figure/index";
+import { Fault } from "../../../core/model/errors";
+import { nearestWord } from "../../../core/study/read";
+import { writeFileWhole } from "../../writers/atomic-file";
+import { refuseExisting, writeFolderAtomically } from "../../writers/atomic-folder";
+import type { Job } from "../job";
+import type { Workspace } from "../workspace";
+import { analyse } from "./analysis";
+import { writeFields } from "./fields-file";
+import { writeFigures } from "./figure-files";
+import { fingerprints } from "./fingerprint";
+import { writeLatitudeTime } from "./latitude-time-file";
+import { methodsText } from "./methods-text";
+import { profileTable } from "./profile-table";
+import { summaryOf } from "./summary";
+
+/** Runs a study and writes its result folder, whole or not at all; an existing folder is refused before any work. */
+export async function runStudy(
+  workspace: Workspace,
+  request: { readonly open: OpenStudy; readonly folder: string; readonly overwrite: boolean },
+  job: Job,
+): Promise<RunSummaryPlace> {
+  const { open, folder, overwrite } = request;
+  requireKnownFigures(open);
+  await refuseExisting(folder, overwrite);
+  const analysis = await analyse(workspace, open, job);
+  const written = await writeFolderAtomically(folder, { overwrite }, async (stage) => {
+    job.report({ step: "Writing results", done: 0, total: 1 });
+    const files = ["latitude-time.nc", "profile.csv", "methods.md"];
+    if (open.study.outputs.fields !== "none") {
+      await writeFields(join(stage, "fields.nc"), analysis, workspace.pool, job);
+      files.unshift("fields.nc");
+    }
+    await writeLatitudeTime(join(stage, "latitude-time.nc"), analysis);
+    await writeFileWhole(join(stage, "profile.csv"), profileTable(analysis));
+    await writeFileWhole(join(stage, "methods.md"), methodsText(analysis));
+    files.push(...(await writeFigures(stage, analysis, workspace, job)));
+    const inputs = await fingerprints(analysis.loaded.index, open.folder, () => job.throwIfCancelled());
+    const summary = JSON.stringify(summaryOf(analysis, inputs, files), null, 2);
+    await writeFileWhole(join(stage, "summary.json"), `${summary}\n`);
+    job.throwIfCancelled();
+    return ["summary.json", ...files];
+  });
+  return { folder, files: written };
+}
+
+function requireKnownFigures({ study, path }: OpenStudy): void {
+  const known = figures.map(({ id }) => id as string);
+  const unknown = study.outputs.figures.find((id) => !known.includes(id));
+  if (unknown === undefined) return;
+  throw new Fault({
+    tag: "study",
+    where: `${path || "study"}: outputs.figures`,
+    expected: `figures among ${known.join(", ")}`,
+    got: `"${unknown}"`,
+    advice: `did you mean "${nearestWord(unknown, known)}"?`,
+  });
+}

@@ -1,0 +1,123 @@
+import { formatDay } from "../../../core/model/calendar";
+import { cautionsFor } from "../../../core/study/cautions";
+import { filterEnds } from "../latitudes";
+import type { Moments } from "../tasks/moments";
+import { type Analysis, mappedQuantities } from "./analysis";
+import type { InputFile } from "./fingerprint";
+import { crossingPeriods } from "./half-amplitude";
+import { version } from "./version";
+
+export interface Quantified {
+  readonly value: number | null;
+  readonly unit: string;
+}
+
+/** summary.json as data: headline numbers with units, the full study, versions, inputs, cautions. */
+export function summaryOf(analysis: Analysis, inputs: readonly InputFile[], files: readonly string[]): object {
+  const { open, stages, loaded } = analysis;
+  const { record } = stages;
+  const { time, cube, hasData } = record;
+  const { latitude, longitude } = record.axes;
+  return {
+    strake: version,
+    title: open.study.title,
+    study: open.study,
+    inputs,
+    grid: {
+      id: analysis.grid,
+      height: loaded.index.height,
+      notes: loaded.index.notes,
+      masked: { ...loaded.masked, unit: "cells over all dates" },
+    },
+    record: {
+      from: formatDay(time.calendar, time.values[0]),
+      to: formatDay(time.calendar, time.values[cube.dates - 1]),
+      calendar: time.calendar,
+      dates: cube.dates,
+      datesWithData: hasData.reduce((sum, flag) => sum + flag, 0),
+      step: number(time.step, "days"),
+      largestTimeDeviation: number(loaded.index.timeDeviationDays, "days"),
+      south: number(latitude.values[0], "degrees_north"),
+      north: number(latitude.values[cube.rows - 1], "degrees_north"),
+      west: number(longitude.values[0], "degrees_east"),
+      east: number(longitude.values[cube.columns - 1], "degrees_east"),
+      rows: cube.rows,
+      columns: cube.columns,
+      oceanCells: record.ocean.reduce((sum, flag) => sum + flag, 0),
+    },
+    headline: headlineOf(analysis),
+    filter: filterOf(analysis),
+    cautions: cautionsFor(open.study, record),
+    files,
+  };
+}
+
+function headlineOf(analysis: Analysis): Record<string, Quantified> {
+  const { asItStands, band, moments, stages } = analysis;
+  const { latitude } = stages.record.axes;
+  const { mean, half95 } = asItStands.profile;
+  const fastest = indexOfMost(mean, (value) => value);
+  const slowest = indexOfMost(mean, (value) => -value);
+  const rms: Record<string, Quantified> = {};
+  mappedQuantities.forEach(({ variable, units }, q) => {
+    rms[`${variable}RootMeanSquare`] = number(areaRms(moments, q, analysis), units);
+    if (band) rms[`${variable}BandRootMeanSquare`] = number(areaRms(band.moments, q, analysis), units);
+  });
+  return {
+    ...rms,
+    fastestEastwardMean: number(mean[fastest], "m s-1"),
+    fastestEastwardMeanHalf95: number(half95[fastest], "m s-1"),
+    fastestEastwardMeanLatitude: number(latitude.values[fastest], "degrees_north"),
+    fastestWestwardMean: number(mean[slowest], "m s-1"),
+    fastestWestwardMeanHalf95: number(half95[slowest], "m s-1"),
+    fastestWestwardMeanLatitude: number(latitude.values[slowest], "degrees_north"),
+  };
+}
+
+/** Root mean square over cells and dates, each cell with its area's weight. */
+function areaRms({ squares, count }: Moments, q: number, { stages }: Analysis): number {
+  const { rows, columns } = stages.record.cube;
+  const { values } = stages.record.axes.latitude;
+  let sum = 0;
+  let weight = 0;
+  for (let row = 0; row < rows; row++) {
+    const area = Math.cos((values[row] * Math.PI) / 180);
+    for (let cell = row * columns; cell < (row + 1) * columns; cell++) {
+      if (count[q][cell] === 0) continue;
+      sum += area * squares[q][cell];
+      weight += area * count[q][cell];
+    }
+  }
+  return Math.sqrt(sum / weight);
+}
+
+function filterOf({ stages }: Analysis): object | null {
+  const { filter, record } = stages;
+  if (!filter) return null;
+  const { time, cube } = record;
+  const ends = filterEnds(filter, new Uint8Array(cube.dates).fill(1));
+  const firstTrusted = ends.indexOf(0);
+  return {
+    weightsEachSide: filter.halfWidth,
+    halfAmplitudePeriods: crossingPeriods(filter, 0.5, time.step, cube.dates * time.step).map((days) =>
+      number(days, "days"),
+    ),
+    halfPowerPeriods: crossingPeriods(filter, Math.SQRT1_2, time.step, cube.dates * time.step).map((days) =>
+      number(days, "days"),
+    ),
+    lostAtEachEnd: number((firstTrusted < 0 ? cube.dates : firstTrusted) * time.step, "days"),
+    markedDates: filterEnds(filter, record.hasData).reduce((sum, flag) => sum + flag, 0),
+  };
+}
+
+function number(value: number, unit: string): Quantified {
+  return { value: Number.isFinite(value) ? value : null, unit };
+}
+
+function indexOfMost(values: Float64Array, score: (value: number) => number): number {
+  let best = -1;
+  values.forEach((value, i) => {
+    if (!Number.isNaN(value) && (best < 0 || score(value) > score(values[best]))) best = i;
+  });
+  return best;
+}
