@@ -25,6 +25,7 @@ export function standInLatitudes(): LatitudesResult {
     columnDates: Int32Array.of(-2147483648, 0, 2147483647),
     filterEnd: Uint8Array.of(0, 1, 255),
     limits: [-0.5, 0.5],
+    pictureLimits: [-0.25, 0.25],
     response: {
       frequency: Float64Array.of(0.1),
       amplitude: Float64Array.of(1),
