@@ -84,7 +84,9 @@ function zonalTicks(input: LatitudesInput, layout: LatitudesLayout, panel: Panel
   const { from, to } = panel.horizontal;
   const make = (most: number) =>
     linearTicks(from * scale, to * scale, most).map(({ value, label }) => ({ value: value / scale, label }));
-  const ticks = roomiestTicks(panel, make, layout.sizes, 0.6 * layout.sizes.small);
-  const within = [panel.x - 2, panel.x + panel.width + 2] as const;
+  // A narrow panel needs its few labels near each other, a wide one looks calmer with them apart.
+  const gap = Math.max(0.6 * layout.sizes.small, 0.1 * panel.width);
+  const ticks = roomiestTicks(panel, make, layout.sizes, gap);
+  const within = [panel.x - 6, panel.x + panel.width + 6] as const;
   return bottomTickMarks(panel, ticks, within, theme, layout.sizes);
 }

@@ -51,7 +51,7 @@ export function madeUpInput(shape: MadeUpShape = {}): LatitudesInput {
     "made up",
   );
   const time = makeTimeAxis(
-    Float64Array.from({ length: dates }, (_, date) => 22340 + 3 * date),
+    Float64Array.from({ length: dates }, (_, date) => 22339 + 3 * date),
     "standard",
     "made up",
   );
