@@ -2,7 +2,8 @@
 
 Without options: the date in the middle of the record, stencils 3 and 7, ellipsoid; root-mean-square of each field and
 its values at 400 pseudo-random cells, into sample-fields.json. With --all OUT.nc: every date, stencil 7, into a netCDF
-file (CF names) for comparing a whole run. Reads sample-data/grid/*.nc; without them it says so and writes nothing.
+file (CF names) for comparing a whole run. Reads sample-data/grid/halcyon-a-*.nc (product A, quarter degree); without
+them it says so and writes nothing.
 """
 import sys
 from pathlib import Path
@@ -29,9 +30,9 @@ def first_with(dataset, attribute, accepted):
 
 def opened():
     """The sample's packed height (time, latitude, longitude) as stored, and its grid."""
-    files = sorted(FILES.glob("*.nc"))
+    files = sorted(FILES.glob("halcyon-a-*.nc"))
     if not files:
-        print(f"no sample grid under {FILES.parent.name}/{FILES.name}: nothing to compute")
+        print(f"no product A under {FILES.parent.name}/{FILES.name}: nothing to compute")
         sys.exit(0)
     dataset = xarray.open_mfdataset(files, combine="by_coords", mask_and_scale=False)
     height = dataset[first_with(dataset, "standard_name", lambda text: text.startswith("sea_surface_height_above"))]
