@@ -29,7 +29,8 @@ async function main(): Promise<void> {
     await writeTruth(simulation, join(truthFolder, "halcyon-truth.nc")),
     await writeStudy(scenario, join(folder, "halcyon.study.json")),
   ];
-  for (const file of files) process.stdout.write(`${((await stat(file)).size / 1e3).toFixed(0).padStart(7)} kB  ${file}\n`);
+  for (const file of files)
+    process.stdout.write(`${((await stat(file)).size / 1e3).toFixed(0).padStart(7)} kB  ${file}\n`);
 }
 
 await main();
