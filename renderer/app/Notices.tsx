@@ -1,21 +1,37 @@
+import { useEffect } from "react";
 import { Button } from "../controls/Button";
+import type { Notice } from "../state/notices";
 import { useBench, useBenchState } from "./bench-context";
 
-/** Faults and news, newest last; a fault stays until it is dismissed. */
+const newsMs = 10_000;
+
+/** Faults and news, newest last. A fault stays until it is dismissed; news leaves by itself. */
 export function Notices() {
-  const bench = useBench();
   const notices = useBenchState((state) => state.notices);
   return (
-    <div className="notices" data-notices={notices.length}>
+    <div className="notices">
       {notices.map((notice) => (
-        <div key={notice.id} className={`notice ${notice.kind}`} role={notice.kind === "error" ? "alert" : "status"}>
-          <h3>{notice.heading}</h3>
-          <p className="any-text">{notice.text}</p>
-          <Button kind="icon" label="Dismiss" onPress={() => bench.dismiss(notice.id)}>
-            ×
-          </Button>
-        </div>
+        <NoticeCard key={notice.id} notice={notice} />
       ))}
+    </div>
+  );
+}
+
+function NoticeCard({ notice }: { readonly notice: Notice }) {
+  const bench = useBench();
+  const { id, kind } = notice;
+  useEffect(() => {
+    if (kind !== "news") return;
+    const timer = setTimeout(() => bench.dismiss(id), newsMs);
+    return () => clearTimeout(timer);
+  }, [bench, id, kind]);
+  return (
+    <div className={`notice ${kind}`} role={kind === "error" ? "alert" : "status"}>
+      <h3>{notice.heading}</h3>
+      <p className="any-text">{notice.text}</p>
+      <Button kind="icon" label="Dismiss" onPress={() => bench.dismiss(id)}>
+        ×
+      </Button>
     </div>
   );
 }

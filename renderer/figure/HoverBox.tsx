@@ -28,7 +28,7 @@ export function HoverBox({ x, y, value, place, bounds }: HoverBoxProps) {
       <strong>
         <Units text={value} />
       </strong>
-      <span>{place}</span>
+      <span className="place">{place}</span>
     </div>
   );
 }

@@ -36,10 +36,10 @@ export function moveEdge<Band extends BandEdges>(band: Band, edge: BandEdge, day
 
 /**
  * The next period up (`direction` 1) or down (-1) on a ladder whose rungs widen with the period, so that one key press
- * is a visible step anywhere on a logarithmic axis: 1 day up to 100, 5 up to 365, 10 beyond.
+ * is a visible step anywhere on a logarithmic axis: 1 day up to 100, 5 up to 360, 10 beyond.
  */
 export function stepPeriod(days: number, direction: 1 | -1): number {
   const above = direction === 1 ? days : days - 1e-9;
-  const rung = above < 100 ? 1 : above < 365 ? 5 : 10;
+  const rung = above < 100 ? 1 : above < 360 ? 5 : 10;
   return direction === 1 ? (Math.floor(days / rung + 1e-9) + 1) * rung : (Math.ceil(days / rung - 1e-9) - 1) * rung;
 }

@@ -1,4 +1,5 @@
 import type {
+  Caution,
   FieldChoice,
   LatitudesResult,
   OpenStudy,
@@ -35,6 +36,8 @@ export interface BenchState {
   readonly cursor: Cursor | null;
   readonly playing: boolean;
   readonly record: RecordOverview | null;
+  /** Follow the settings, which change more often than the record. */
+  readonly cautions: readonly Caution[];
   readonly picture: Picture | null;
   readonly spectrum: SpectrumResult | null;
   /** Opening and reading; null when nothing is under way. */
@@ -60,6 +63,7 @@ export const firstState: BenchState = {
   cursor: null,
   playing: false,
   record: null,
+  cautions: [],
   picture: null,
   spectrum: null,
   loading: null,

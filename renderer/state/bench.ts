@@ -74,7 +74,10 @@ export function createBench(link: EngineLink, drafts: Drafts): Bench {
     const before = store.get().studies;
     if (!before || next === before) return;
     store.set({ studies: next });
-    if (next.present === before.present) return;
+    if (next.present === before.present) {
+      drawn.refresh();
+      return;
+    }
     keepDraft(next.present);
     const { grids } = next.present.study;
     if (!grids.some((grid) => grid.id === store.get().grid)) store.set({ grid: grids[0].id });

@@ -22,6 +22,7 @@ export function fields(store: BenchStore, engine: Engine, fail: (error: unknown)
   let askedStudy: OpenStudy | null = null;
   let askedRecord: RecordOverview | null = null;
   let askedSpectrum = "";
+  let cautioned: OpenStudy | null = null;
 
   const latitudes = latestWins<LatitudesQuestion, LatitudesResult>({
     run: ({ request }, signal) => engine.latitudes(request, { signal }),
@@ -41,6 +42,14 @@ export function fields(store: BenchStore, engine: Engine, fail: (error: unknown)
       askedSpectrum = "";
       fail(error);
     },
+  });
+
+  const cautions = latestWins<Parameters<Engine["load"]>[0], RecordOverview>({
+    run: (request, signal) => engine.load(request, { signal }),
+    deliver: (overview, { open }) => {
+      if (open === store.get().studies?.present) store.set({ cautions: overview.cautions });
+    },
+    fail,
   });
 
   const refreshLatitudes = (): void => {
@@ -65,14 +74,26 @@ export function fields(store: BenchStore, engine: Engine, fail: (error: unknown)
     spectrum.ask({ open, grid, quantity: choice.quantity });
   };
 
+  /** Cautions depend on the settings; asked for when a gesture has ended, not on its way. */
+  const refreshCautions = (): void => {
+    const { studies, record, grid } = store.get();
+    if (!studies || !record || studies.gesture !== null || studies.present === cautioned) return;
+    const isLoaded = cautioned === null;
+    cautioned = studies.present;
+    if (!isLoaded) cautions.ask({ open: studies.present, grid });
+  };
+
   return {
     refresh() {
       refreshLatitudes();
       refreshSpectrum();
+      refreshCautions();
     },
     stop() {
       latitudes.stop();
       spectrum.stop();
+      cautions.stop();
+      cautioned = null;
       asked = "";
       askedStudy = null;
       askedSpectrum = "";

@@ -43,7 +43,7 @@ export function keyAction(press: KeyPress): KeyAction | null {
     if (key === "z") return { kind: press.shift ? "redo" : "undo" };
     return key === "y" ? { kind: "redo" } : null;
   }
-  const action = plain[press.key] ?? null;
+  const action = Object.hasOwn(plain, press.key) ? plain[press.key] : null;
   if (!action) return null;
   const moves = action.kind === "latitude" || action.kind === "date";
   if (moves && (press.focus === "choice" || press.focus === "slider")) return null;

@@ -61,7 +61,7 @@ export function loader({ store, engine, drafts, fail, tell, loaded }: LoaderPart
     const record = await engine.load({ open: studies.present, grid }, { signal, onProgress });
     if (running !== controller) return;
     const cursor = fitCursor(store.get().cursor, record.latitude.values, record.time.values.length, sameDates);
-    store.set({ record, cursor });
+    store.set({ record, cautions: record.cautions, cursor });
     loaded();
   };
 

@@ -7,6 +7,7 @@ import {
   formatNumber,
   formatSignificant,
 } from "../../core/figure/format";
+import { cellEdges } from "../../core/figure/resample";
 import { formatDate } from "../../core/figure/time-ticks";
 
 import type { Study } from "../../core/study/schema";
@@ -20,14 +21,14 @@ export function recordText(record: RecordAxes): string {
   return `${boxText(record)} · ${formatCount(days)} days`;
 }
 
-/** The corners of a record's region, "20.5–40.5° N, 150–125° W": centres of the outermost cells. */
-export function boxText({ latitude, longitude }: RecordAxes): string {
-  return `${formatLatitudeRange(...ends(latitude.values))}, ${formatLongitudeRange(...ends(longitude.values))}`;
+/** A record's region by the outer edges of its cells: "20–41° N, 150–125° W". */
+export function boxText({ latitude, longitude }: Pick<RecordAxes, "latitude" | "longitude">): string {
+  return `${formatLatitudeRange(...edges(latitude.values))}, ${formatLongitudeRange(...edges(longitude.values))}`;
 }
 
-function ends(values: Float64Array): [number, number] {
-  const last = values[values.length - 1];
-  return values[0] <= last ? [values[0], last] : [last, values[0]];
+function edges(values: Float64Array): [number, number] {
+  const [first, last] = cellEdges(values);
+  return first <= last ? [first, last] : [last, first];
 }
 
 /** A grid's name with its spacing and sampling: "Grid A · 0.125° · 3 d". */

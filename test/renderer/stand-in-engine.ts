@@ -134,6 +134,7 @@ export function standInEngine(calls: string[] = []): Engine {
         columnDates: Int32Array.from({ length: dates }, (_, date) => date),
         filterEnd: Uint8Array.from({ length: dates }, (_, date) => (date < 40 || date > dates - 40 ? 1 : 0)),
         limits: [-0.16, 0.16],
+        pictureLimits: [-0.1, 0.1],
         response: { ...response(study.band), halfWidthSteps: 40, daysLostEachEnd: 120 },
       };
     },

@@ -1,15 +1,15 @@
-import type { RecordOverview } from "../../../core/contract/engine";
+import type { Caution } from "../../../core/contract/engine";
 
 const standing =
   "Geostrophic part of the flow only. Not for navigation: follow local rules and the judgement of licensed mariners.";
 
 /** What limits the numbers on screen. */
-export function Cautions({ record }: { readonly record: RecordOverview }) {
+export function Cautions({ cautions }: { readonly cautions: readonly Caution[] }) {
   return (
     <section aria-label="Cautions">
       <h2>Cautions here</h2>
       <ul className="cautions">
-        {record.cautions.map((caution) => (
+        {cautions.map((caution) => (
           <li key={caution.id} className="any-text">
             {caution.text}
           </li>

@@ -5,7 +5,7 @@ import type { Picture } from "../../state/bench-state";
 import { Units } from "../../text/Units";
 import { intervalText, valueText } from "../../text/values";
 import { quantityText } from "./quantities";
-import { dateText, pictureStyle } from "./readout";
+import { dateText, meanStyle } from "./readout";
 
 /** The numbers on the held latitude. */
 export function CursorReadout({ picture }: { readonly picture: Picture }) {
@@ -13,7 +13,7 @@ export function CursorReadout({ picture }: { readonly picture: Picture }) {
   if (!cursor) return null;
   const { result } = picture;
   const row = rowAt(picture, cursor.latitude);
-  const style = pictureStyle(picture);
+  const style = meanStyle(picture);
   const entries = [
     [dateText(picture, result.dateIndex), valueText(style, result.onDate[row])],
     ["Mean of the period", intervalText(style, result.profile.mean[row], result.profile.half95[row])],

@@ -15,6 +15,7 @@ export function LatitudesView({ ground }: { readonly ground: Ground }) {
   const open = useBenchState((state) => state.studies?.present ?? null);
   const record = useBenchState((state) => state.record);
   const picture = useBenchState((state) => state.picture);
+  const cautions = useBenchState((state) => state.cautions);
   const loading = useBenchState((state) => state.loading);
   if (!open || !record || (loading && !picture)) return <NothingYet />;
   return (
@@ -26,7 +27,7 @@ export function LatitudesView({ ground }: { readonly ground: Ground }) {
       <aside className="side" aria-label="Readout and settings">
         {picture ? <CursorReadout picture={picture} /> : null}
         <StudySettings open={open} />
-        <Cautions record={record} />
+        <Cautions cautions={cautions} />
         {picture ? <ProfileTable picture={picture} /> : null}
         <StudyActions open={open} />
         {picture ? <Spoken picture={picture} /> : null}

@@ -4,7 +4,7 @@ import { useBenchState } from "../../app/bench-context";
 import { rowAt } from "../../figure/cell-values";
 import type { Picture } from "../../state/bench-state";
 import { Units } from "../../text/Units";
-import { pictureStyle } from "./readout";
+import { meanStyle } from "./readout";
 
 /** The profile as a table, northernmost row first, for reading out and copying. Built only while it is open. */
 export function ProfileTable({ picture }: { readonly picture: Picture }) {
@@ -20,7 +20,7 @@ export function ProfileTable({ picture }: { readonly picture: Picture }) {
 function Rows({ picture }: { readonly picture: Picture }) {
   const held = useBenchState((state) => (state.cursor ? rowAt(picture, state.cursor.latitude) : -1));
   const { mean, half95, effectiveSize } = picture.result.profile;
-  const style = pictureStyle(picture);
+  const style = meanStyle(picture);
   const latitudes = [...picture.record.latitude.values].sort((a, b) => a - b);
   const shown = (value: number): string => formatNumber(value * style.scale, style.digits);
   return (

@@ -5,7 +5,7 @@ import { rowAt } from "../../figure/cell-values";
 import type { Picture } from "../../state/bench-state";
 import { spokenCursor } from "../../text/spoken";
 import { valueText } from "../../text/values";
-import { dateText, pictureStyle } from "./readout";
+import { dateText, meanStyle } from "./readout";
 
 const restMs = 300;
 
@@ -17,7 +17,7 @@ export function Spoken({ picture }: { readonly picture: Picture }) {
   useEffect(() => {
     if (!cursor || playing) return;
     const timer = setTimeout(() => {
-      const value = valueText(pictureStyle(picture), picture.result.onDate[rowAt(picture, cursor.latitude)]);
+      const value = valueText(meanStyle(picture), picture.result.onDate[rowAt(picture, cursor.latitude)]);
       setText(spokenCursor(formatLatitude(cursor.latitude, 2), dateText(picture, picture.result.dateIndex), value));
     }, restMs);
     return () => clearTimeout(timer);

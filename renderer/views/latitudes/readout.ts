@@ -12,9 +12,18 @@ export interface Readout {
   readonly place: string;
 }
 
-/** How the picture's values are written. */
-export function pictureStyle({ result }: Picture): ValueStyle {
-  return valueStyle(quantityText(result.choice.quantity).units, Math.max(...result.limits.map(Math.abs)));
+/** How the map's values are written. */
+export function mapStyle({ result }: Picture): ValueStyle {
+  return styleFor(result.choice.quantity, result.limits);
+}
+
+/** How zonal means are written: they are weaker than the map they average. */
+export function meanStyle({ result }: Picture): ValueStyle {
+  return styleFor(result.choice.quantity, result.pictureLimits);
+}
+
+function styleFor(quantity: string, [lower, upper]: readonly [number, number]): ValueStyle {
+  return valueStyle(quantityText(quantity).units, Math.max(Math.abs(lower), Math.abs(upper)));
 }
 
 /** Date at an index of the picture's record. */
@@ -24,23 +33,25 @@ export function dateText({ record }: Picture, index: number): string {
 
 /** Value, unit, place and date under the pointer; null where a panel has nothing to tell. */
 export function pointerReadout(picture: Picture, pointed: Pointed): Readout | null {
-  const style = pictureStyle(picture);
   const { latitude, longitude, day } = pointed;
   if (latitude !== null && longitude !== null) {
     const cell = mapValueAt(picture, latitude, longitude);
     const place = `${formatLatitude(cell.latitude, 2)} ${formatLongitude(cell.longitude, 2)}`;
-    return { value: valueText(style, cell.value), place: `${place}, ${dateText(picture, picture.result.dateIndex)}` };
+    return {
+      value: valueText(mapStyle(picture), cell.value),
+      place: `${place}, ${dateText(picture, picture.result.dateIndex)}`,
+    };
   }
   if (latitude !== null && day !== null) {
     const cell = timeValueAt(picture, latitude, day);
     const place = `${formatLatitude(cell.latitude, 2)}, ${dateText(picture, cell.dateIndex)}`;
-    return { value: valueText(style, cell.value), place };
+    return { value: valueText(meanStyle(picture), cell.value), place };
   }
   if (latitude !== null) {
     const { mean, half95 } = picture.result.profile;
     const row = rowAt(picture, latitude);
     return {
-      value: intervalText(style, mean[row], half95[row]),
+      value: intervalText(meanStyle(picture), mean[row], half95[row]),
       place: `${formatLatitude(latitude, 2)}, mean of the period`,
     };
   }
