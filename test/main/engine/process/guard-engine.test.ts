@@ -16,7 +16,7 @@ const at = (...parts: string[]) => path.join(root, ...parts);
 beforeAll(async () => {
   root = await realpath(await mkdtemp(path.join(tmpdir(), "strake-guard-")));
   for (const folder of ["open/grid", "linked/deep", "secret"]) await mkdir(at(folder), { recursive: true });
-  for (const name of ["open/grid/a.nc", "open/grid/b.nc", "secret/s.nc", "linked/deep/a.nc"])
+  for (const name of ["open/grid/a.nc", "open/grid/b.nc", "secret/s.nc", "secret/t.nc", "linked/deep/a.nc"])
     await writeFile(at(name), "x");
   await symlink(at("secret", "s.nc"), at("linked", "out.nc"));
   await symlink(at("secret"), at("linked", "deep", "folder"));
@@ -87,6 +87,31 @@ describe("the engine behind the guard", () => {
       await expect(guarded.describe({ paths })).rejects.toMatchObject({ tag: "request" });
     }
     expect(standIn.called).toEqual(["open", "describe"]);
+  });
+
+  test("reads nothing beside a single opened file, though results may be written there", async () => {
+    const grants = createGrants();
+    await grants.grant([at("open", "grid", "a.nc")]);
+    const narrow = guardEngine(standIn, grants);
+    const folder = at("open", "grid");
+    await expect(narrow.open({ paths: [at("open", "grid", "b.nc")] })).rejects.toMatchObject({ tag: "request" });
+    await expect(narrow.open({ paths: [folder] })).rejects.toMatchObject({ tag: "request" });
+    for (const files of [["b.nc"], ["*.nc"], ["a.nc", "b.nc"]]) {
+      await expect(narrow.load({ open: study(files, folder), grid: "A" })).rejects.toMatchObject({ tag: "request" });
+    }
+    await narrow.open({ paths: [at("open", "grid", "a.nc")] });
+    await narrow.load({ open: study(["a.nc"], folder), grid: "A" });
+    expect(standIn.called).toEqual(["open", "load"]);
+  });
+
+  test("opens no folder that holds a link to beside an opened file", async () => {
+    const grants = createGrants();
+    await grants.grant([at("linked"), at("secret", "t.nc")]);
+    const narrow = guardEngine(standIn, grants);
+    await expect(narrow.open({ paths: [at("linked")] })).rejects.toMatchObject({ tag: "request" });
+    await expect(narrow.load({ open: study(["*.nc"], at("linked")), grid: "A" })).rejects.toMatchObject({
+      tag: "request",
+    });
   });
 
   test("writes results only below opened folders", async () => {
