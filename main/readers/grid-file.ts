@@ -70,8 +70,13 @@ export function readGridFile(
   const layout = gridLayout(container.path, recognised);
   refuseHugePlane(height.shape[layout.latitude] * height.shape[layout.longitude], where);
   const axes = readSpatialAxes(container, recognised.latitude, recognised.longitude);
-  const { calendar, units, days } = readTimes(container, recognised.time, choices.months);
+  const { calendar, units, days: allDays } = readTimes(container, recognised.time, choices.months);
   const notes = [...recognised.notes, ...axes.notes];
+  const maps = layout.time === null ? 1 : height.shape[layout.time];
+  if (maps === 0) throw fileFault(where, "at least one map", "none", "choose another file");
+  if (maps < allDays.length)
+    notes.push(`${height.name} has maps for the first ${maps} of ${allDays.length} dates only`);
+  const days = allDays.subarray(0, maps);
   const packing = readPacking(height, where, choices);
   const fileUnits = textAttribute(height.attributes, "units");
   const metres = fileUnits === "" ? 1 : metresPerUnit(fileUnits);
