@@ -6,7 +6,7 @@ import type { GridFileReport } from "../../core/model/source";
 import type { MonthReading } from "../../core/model/time-units";
 import { textAttribute } from "./attributes";
 import { readSpatialAxes, readTimes } from "./axes";
-import type { Container, NumericArray } from "./container";
+import type { Container, NumericArray, VariableInfo } from "./container";
 import { fileFault } from "./faults";
 import { joinTimes } from "./join-times";
 import type { GridLayout } from "./layout";
@@ -70,6 +70,8 @@ export function readGridFile(
   const layout = gridLayout(container.path, recognised);
   refuseHugePlane(height.shape[layout.latitude] * height.shape[layout.longitude], where);
   const axes = readSpatialAxes(container, recognised.latitude, recognised.longitude);
+  checkSameLength(height.shape[layout.latitude], recognised.latitude, where);
+  checkSameLength(height.shape[layout.longitude], recognised.longitude, where);
   const { calendar, units, days: allDays } = readTimes(container, recognised.time, choices.months);
   const notes = [...recognised.notes, ...axes.notes];
   const maps = layout.time === null ? 1 : height.shape[layout.time];
@@ -165,6 +167,13 @@ function readFirstDate(container: Container, plan: GridFilePlan): NumericArray {
 export function storedAs({ type, scale, offset }: Packing): string {
   const scaled = scale === 1 ? "" : ` × ${scale}`;
   return `${type}${scaled}${offset === 0 ? "" : ` + ${offset}`}`;
+}
+
+/** Only plain HDF5 and unlimited dimensions can break this. */
+function checkSameLength(length: number, coordinate: VariableInfo, where: string): void {
+  if (coordinate.shape[0] === length) return;
+  const got = `${coordinate.shape[0]} values of ${coordinate.name}`;
+  throw fileFault(where, `${length} values along ${coordinate.dimensions[0]}`, got, "mend the coordinate variable");
 }
 
 function refuseHugePlane(cells: number, where: string): void {

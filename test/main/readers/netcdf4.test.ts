@@ -37,6 +37,13 @@ it("a file in a folder with an umlaut, a dash and a space opens", async () => {
   container.close();
 });
 
+it("a codec that is not there is named and the other variables stay readable", async () => {
+  const container = await openContainer(fixture("codec.nc"));
+  expect(() => container.read("zstandard", [0], [10])).toThrow(/codec\.nc: zstandard: .*HDF5 filter 32015/);
+  expect(asListed(container.read("deflated", [0], [10]))).toEqual([0, 1, 2, 3, 4, 5, 6, 7, 8, 9]);
+  container.close();
+});
+
 describe("damage", () => {
   const bytes = readFileSync(fixture("chunked.nc"));
 
