@@ -18,6 +18,7 @@ beforeAll(async () => {
     desktopEntry: path.join(root, "desktop.js"),
     preload: path.join(root, "preload.cjs"),
     engineEntry: path.join(root, "engine.js"),
+    workerEntry: path.join(root, "worker.js"),
     pageFolder: path.join(root, "page"),
     sampleStudy: path.join(root, "sample.study.json"),
   };
