@@ -29,11 +29,12 @@ export interface Hdf5Writer {
 
 export async function openHdf5Writer(path: string): Promise<Hdf5Writer> {
   await ready;
-  const file = new File(path, "w", { track_order: true });
+  const file = atNoTime(() => new File(path, "w", { track_order: true }));
   if (file.file_id < 0n) throw refused(path, "open");
   const id = file.file_id;
   const at = (name: string): string => (name === "/" ? "/" : `/${name}`);
-  const must = (status: number | undefined | null, what: string): void => {
+  const must = (what: string, call: () => number | undefined): void => {
+    const status = atNoTime(call);
     if (typeof status === "number" && status < 0) throw refused(path, what);
   };
 
@@ -50,7 +51,7 @@ export async function openHdf5Writer(path: string): Promise<Hdf5Writer> {
     };
     const what = `create ${variable.name}`;
     withBytes(variable.values, (pointer) =>
-      atNoTime(() => must(Module.create_dataset(id, at(variable.name), pointer, metadata as never), what)),
+      must(what, () => Module.create_dataset(id, at(variable.name), pointer, metadata as never)),
     );
   };
 
@@ -58,7 +59,7 @@ export async function openHdf5Writer(path: string): Promise<Hdf5Writer> {
     const shape = asVector ? [BigInt(values.length)] : [];
     const metadata = { ...dtype_to_metadata(codeOf(values)), shape, maxshape: shape };
     withBytes(values, (pointer) =>
-      must(Module.create_attribute(id, at(owner), name, pointer, metadata as never), `set ${owner}@${name}`),
+      must(`set ${owner}@${name}`, () => Module.create_attribute(id, at(owner), name, pointer, metadata as never)),
     );
   };
 
@@ -68,36 +69,33 @@ export async function openHdf5Writer(path: string): Promise<Hdf5Writer> {
       const count = [to - from, ...shape.slice(1)].map(BigInt);
       const offset = [from, ...shape.slice(1).map(() => 0)].map(BigInt);
       const strides = shape.map(() => 1n);
-      must(Module.resize_dataset(id, at(name), [to, ...shape.slice(1)].map(BigInt)), `extend ${name}`);
+      must(`extend ${name}`, () => Module.resize_dataset(id, at(name), [to, ...shape.slice(1)].map(BigInt)));
       withBytes(values, (pointer) =>
-        must(Module.set_dataset_data(id, at(name), count, offset, strides, pointer), `write ${name}`),
+        must(`write ${name}`, () => Module.set_dataset_data(id, at(name), count, offset, strides, pointer)),
       );
     },
     createEmptyScale(name, length, label) {
       const values = new Float32Array(length);
       const chunks = [Math.min(length, 65536)];
       create({ name, code: "<f", shape: [length], chunks, compression: 9, values });
-      must(Module.set_scale(id, at(name), label), `make a scale of ${name}`);
+      must(`make a scale of ${name}`, () => Module.set_scale(id, at(name), label));
     },
     makeScale(name, label) {
-      must(Module.set_scale(id, at(name), label), `make a scale of ${name}`);
+      must(`make a scale of ${name}`, () => Module.set_scale(id, at(name), label));
     },
     attachScale(variable, axis, scale) {
-      must(Module.attach_scale(id, at(variable), at(scale), axis), `attach ${scale} to ${variable}`);
+      must(`attach ${scale} to ${variable}`, () => Module.attach_scale(id, at(variable), at(scale), axis));
     },
     attribute,
     textAttribute(owner, name, text) {
       const bytes = new TextEncoder().encode(text === "" ? " " : text);
       const metadata = { ...dtype_to_metadata(`S${bytes.length}`), shape: [], maxshape: [] };
       withBytes(bytes, (pointer) =>
-        must(Module.create_attribute(id, at(owner), name, pointer, metadata as never), `set ${owner}@${name}`),
+        must(`set ${owner}@${name}`, () => Module.create_attribute(id, at(owner), name, pointer, metadata as never)),
       );
     },
     close() {
-      must(
-        atNoTime(() => file.close()),
-        "close",
-      );
+      must("close", () => file.close());
     },
   };
 }

@@ -2,6 +2,7 @@ import { join } from "node:path";
 import { type Netcdf4Spec, writeNetcdf4 } from "../../main/writers/netcdf4";
 import { fieldPair } from "../model/half-plane";
 import type { VorticityModel } from "../model/vorticity-model";
+import { writeClassicNetcdf } from "./classic-netcdf";
 import {
   centreLongitude,
   heightOfStream,
@@ -140,7 +141,7 @@ function gridASpec(scenario: Scenario, maps: HeightMaps, dates: readonly number[
   };
 }
 
-/** Product B: half degree, latitudes descending, longitudes 0 to 360, int16 of 0.1 mm kept in cm, one file. */
+/** Product B: half degree, latitudes descending, longitudes 0 to 360, int16 of 0.1 mm kept in cm, one file of the classic format. */
 export async function writeGridB(simulation: Simulation, folder: string): Promise<string[]> {
   const { scenario, model, mapsB } = simulation;
   const maps = heightMaps(model, scenario.gridB, mapsB, scenario.seed + 2);
@@ -159,7 +160,7 @@ export async function writeGridB(simulation: Simulation, folder: string): Promis
   });
   const start = daysSince1950(scenario.firstDate);
   const path = join(folder, "halcyon-b.nc");
-  await writeNetcdf4(path, {
+  await writeClassicNetcdf(path, {
     dimensions: { time: maps.dates.length, lat: rows, lon: columns },
     attributes: {
       ...simulatedNotice("Simulated sea-surface height of the invented Halcyon Basin, mapped product B"),
@@ -179,8 +180,6 @@ export async function writeGridB(simulation: Simulation, folder: string): Promis
         dimensions: ["time", "lat", "lon"],
         values: packed,
         fillValue: fill,
-        chunks: [Math.min(30, maps.dates.length), rows, columns],
-        gzipLevel: 9,
         attributes: {
           standard_name: "sea_surface_height_above_geoid",
           long_name: "simulated height of the sea surface above the geoid",
