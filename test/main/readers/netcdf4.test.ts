@@ -37,6 +37,23 @@ it("a file in a folder with an umlaut, a dash and a space opens", async () => {
   container.close();
 });
 
+it("groups, texts, enumerations and coordinates over two dimensions are read; compound variables are left out", async () => {
+  const container = await openContainer(fixture("structure.nc"));
+  const told = container.variables.map(({ name, type, dimensions }) => `${type} ${name}(${dimensions.join(", ")})`);
+  expect(told.sort()).toEqual([
+    "float32 inner/sla(time, pass)",
+    "float64 time(time, pass)",
+    "string names(pass)",
+    "uint8 valid(pass)",
+  ]);
+  expect(container.attributes).toMatchObject({ keywords: ["sea", "height"], summary: "" });
+  expect(findVariable(container, "valid")?.attributes).toMatchObject({ flag_meanings: "FALSE TRUE" });
+  expect(asListed(container.read("valid", [0], [3]))).toEqual([0, 1, 1]);
+  expect(asListed(container.read("inner/sla", [1, 0], [1, 3]))).toEqual([0.75, 1, 1.25]);
+  expect(() => container.read("names", [0], [3])).toThrow(/names: expected numbers, got strings/);
+  container.close();
+});
+
 it("a codec that is not there is named and the other variables stay readable", async () => {
   const container = await openContainer(fixture("codec.nc"));
   expect(() => container.read("zstandard", [0], [10])).toThrow(/codec\.nc: zstandard: .*HDF5 filter 32015/);
