@@ -106,7 +106,9 @@ describe("imports point one way", () => {
   });
 
   test("only the desktop door imports electron", () => {
-    const wrong = imports.filter((each) => /^electron(\/|$)/.test(each.target) && layerOf(each.from) !== "main/desktop");
+    const wrong = imports.filter(
+      (each) => /^electron(\/|$)/.test(each.target) && layerOf(each.from) !== "main/desktop",
+    );
     expect(wrong).toEqual([]);
   });
 

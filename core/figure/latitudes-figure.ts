@@ -3,7 +3,14 @@ import { displayUnits } from "./display-units";
 import type { FigureDefinition } from "./figure-definition";
 import { colourKeyMarks, limitLabels } from "./latitudes/colour-key";
 import { daysMarks, daysPanel } from "./latitudes/days-panel";
-import { inlineHeadingMarks, mapHeading, mapSubheading, periodsText, rowHeadingMarks } from "./latitudes/headings";
+import {
+  inlineHeadingMarks,
+  mapHeading,
+  mapSubheading,
+  periodsText,
+  pictureHeading,
+  rowHeadingMarks,
+} from "./latitudes/headings";
 import type { FigureSize, LatitudesInput } from "./latitudes/input";
 import { latitudeTimeMarks, latitudeTimePanel } from "./latitudes/latitude-time-panel";
 import { type LatitudesLayout, latitudesLayout } from "./latitudes/layout";
@@ -31,6 +38,7 @@ export function latitudesScene(input: LatitudesInput, size: FigureSize, theme: T
     leftLabels: [...ticks, ...varianceTicks(unplaced, input)].map((tick) => tick.label),
     mapHeading: mapHeading(input),
     mapSubheading: mapSubheading(input),
+    pictureHeading,
     mapShape: mapShape(input),
   });
   const map = mapPanel(input, layout);
@@ -45,7 +53,8 @@ export function latitudesScene(input: LatitudesInput, size: FigureSize, theme: T
     description: description(input),
     marks: [
       ...rowHeadingMarks(input, layout, theme),
-      ...colourKeyMarks(input, layout, theme),
+      ...colourKeyMarks("map-key", input, input.result.limits, layout.mapKey, layout.sizes, theme),
+      ...colourKeyMarks("picture-key", input, input.result.pictureLimits, layout.pictureKey, layout.sizes, theme),
       ...mapMarks(input, layout, map, ticks, theme),
       ...zonalMeanMarks(input, layout, zonalMean, theme),
       ...latitudeTimeMarks(input, layout, latitudeTime, theme),
@@ -109,14 +118,16 @@ function lowerMarks(
 /** For people who cannot see the figure, and for the file's desc element. */
 function description(input: LatitudesInput): string {
   const { units } = displayUnits(input.quantity.units);
-  const [lower, upper] = limitLabels(input);
+  const [lower, upper] = limitLabels(input, input.result.limits);
+  const [pictureLower, pictureUpper] = limitLabels(input, input.result.pictureLimits);
+  const unitText = units === "" ? "" : ` ${units}`;
   const { calendar, values } = input.record.time;
   const first = formatDate(calendar, values[0]);
   const last = formatDate(calendar, values[values.length - 1]);
   return (
     `${mapHeading(input)}, ${input.region}: a map, the zonal mean over ${first} to ${last} with its 95 % band, ` +
     `and the zonal mean through time on one latitude axis; ${periodsText(input)}. ` +
-    `Colours run from ${lower} to ${upper}${units === "" ? "" : ` ${units}`}. ${input.grid}.`
+    `Colours run from ${lower} to ${upper}${unitText} on the map, from ${pictureLower} to ${pictureUpper}${unitText} through time. ${input.grid}.`
   );
 }
 

@@ -14,19 +14,24 @@ export function meanAndDeviation(series: Float64Array): { mean: number; deviatio
 }
 
 /**
- * Autocorrelation at lags 0 … longestLag of a series with gaps: lagged products over pairs of valid samples, about the mean,
- * divided by the full record's variance (the biased estimate, which keeps |r| <= 1 on gap-free series).
+ * Autocorrelation at lags 0 … longestLag about the mean. Gap-free series get the biased estimate (divided by the whole sum of
+ * squares, which keeps |r| <= 1); with gaps the mean product over pairs of valid samples stands in, scaled alike. 0 where a
+ * lag has no pair.
  */
 export function autocorrelation(series: Float64Array, longestLag: number): Float64Array {
-  const { mean, count } = meanAndDeviation(series);
+  const { mean } = meanAndDeviation(series);
+  const length = series.length;
   const out = new Float64Array(longestLag + 1);
   for (let lag = 0; lag <= longestLag; lag++) {
     let sum = 0;
-    for (let t = 0; t + lag < series.length; t++) {
+    let pairs = 0;
+    for (let t = 0; t + lag < length; t++) {
       const product = (series[t] - mean) * (series[t + lag] - mean);
-      if (!Number.isNaN(product)) sum += product;
+      if (Number.isNaN(product)) continue;
+      sum += product;
+      pairs++;
     }
-    out[lag] = sum / count;
+    out[lag] = pairs > 0 ? ((sum / pairs) * (length - lag)) / length : 0;
   }
   const variance = out[0];
   return out.map((value) => value / variance);

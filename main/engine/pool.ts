@@ -1,10 +1,8 @@
-import { existsSync } from "node:fs";
 import { availableParallelism } from "node:os";
-import { dirname, join } from "node:path";
-import { fileURLToPath } from "node:url";
 import { Piscina } from "piscina";
 import { Fault, type FaultData } from "../../core/model/errors";
 import type { Job } from "./job";
+import { findPlaces } from "./process/places";
 import type { TaskArguments, TaskName, TaskResult } from "./tasks";
 
 /** What a worker answers: errors travel as data. */
@@ -17,13 +15,11 @@ export class WorkerPool {
 
   constructor(size = Math.max(1, Math.min(8, availableParallelism()))) {
     this.size = size;
-    const filename = workerFile();
     this.#threads = new Piscina({
-      filename,
+      filename: findPlaces(import.meta.url).workerEntry,
       minThreads: size,
       maxThreads: size,
       idleTimeout: Number.POSITIVE_INFINITY,
-      execArgv: filename.endsWith(".ts") ? ["--import", "tsx"] : [],
     });
   }
 
@@ -53,13 +49,4 @@ export class WorkerPool {
   async close(): Promise<void> {
     await this.#threads.destroy();
   }
-}
-
-/** The built worker beside or one folder above this module; the TypeScript one when run from source. */
-function workerFile(): string {
-  const here = dirname(fileURLToPath(import.meta.url));
-  const candidates = [join(here, "worker.js"), join(here, "..", "worker.js"), join(here, "worker.ts")];
-  const found = candidates.find((candidate) => existsSync(candidate));
-  if (!found) throw new Error(`no worker beside ${here}: build first`);
-  return found;
 }

@@ -34,7 +34,7 @@ def opened():
     if not files:
         print(f"no product A under {FILES.parent.name}/{FILES.name}: nothing to compute")
         sys.exit(0)
-    dataset = xarray.open_mfdataset(files, combine="by_coords", mask_and_scale=False)
+    dataset = xarray.concat([xarray.open_dataset(file, mask_and_scale=False) for file in files], dim="time")
     height = dataset[first_with(dataset, "standard_name", lambda text: text.startswith("sea_surface_height_above"))]
     latitude = first_with(dataset, "units", lambda text: text.startswith("degrees_north"))
     longitude = first_with(dataset, "units", lambda text: text.startswith("degrees_east"))

@@ -28,6 +28,8 @@ export function mapSubheading(input: LatitudesInput): string {
   return listed(displayUnits(input.quantity.units).units, periodsText(input));
 }
 
+export const pictureHeading = "Zonal mean through time";
+
 /** Bold headings and grey lines over the three panels, each cut to its own panel's width. */
 export function rowHeadingMarks(input: LatitudesInput, layout: LatitudesLayout, theme: Theme): Mark[] {
   const { units } = displayUnits(input.quantity.units);
@@ -35,6 +37,7 @@ export function rowHeadingMarks(input: LatitudesInput, layout: LatitudesLayout, 
   const averaged = formatLongitudeRange(west, east);
   const { map, zonalMean, latitudeTime, panelGap } = layout;
   const { heading, small } = layout.sizes;
+  const keyIsBeside = layout.pictureKey.x > latitudeTime.x;
   const dateIsAbove = textWidth(mapHeading(input), heading, 700) <= map.width;
   const columns = [
     {
@@ -60,8 +63,8 @@ export function rowHeadingMarks(input: LatitudesInput, layout: LatitudesLayout, 
     {
       id: "latitude-time",
       x: latitudeTime.x,
-      width: latitudeTime.width,
-      heading: ["Zonal mean through time"],
+      width: keyIsBeside ? layout.pictureKey.x - latitudeTime.x - heading : latitudeTime.width,
+      heading: [pictureHeading],
       below: [
         listed(units, `averaged over ${averaged}`, periodsText(input)),
         listed(units, `averaged over ${averaged}`),

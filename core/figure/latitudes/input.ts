@@ -47,7 +47,10 @@ export interface LatitudesValues {
   readonly columnDates: Int32Array;
   /** 1 where the filtered value rests on too little data, by date. */
   readonly filterEnd: Uint8Array;
+  /** Colour limits of the map. */
   readonly limits: readonly [lower: number, upper: number];
+  /** Colour limits of the latitude-time picture. */
+  readonly pictureLimits: readonly [lower: number, upper: number];
   readonly response: Pick<BandResponse, "frequency" | "amplitude" | "daysLostEachEnd">;
 }
 

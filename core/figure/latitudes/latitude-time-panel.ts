@@ -53,7 +53,7 @@ export function latitudeTimeMarks(
   panel: PanelFrame,
   theme: Theme,
 ): Mark[] {
-  const { latitudeTime, columnDates, limits, dateIndex } = input.result;
+  const { latitudeTime, columnDates, pictureLimits, dateIndex } = input.result;
   const times = input.record.time.values;
   const rows = rasterRows(input, panel);
   const columns = rasterColumns(
@@ -61,7 +61,7 @@ export function latitudeTimeMarks(
     panel,
   );
   const values = gatherCells(latitudeTime.values, latitudeTime.columns, rows, columns);
-  const pixels = paint(values, limits, colourMapOf(input, theme), { missing: theme.missing });
+  const pixels = paint(values, pictureLimits, colourMapOf(input, theme), { missing: theme.missing });
   const x = pixelX(panel, times[dateIndex]);
   const { from, to } = panel.horizontal;
   const ticks = timeTicks(

@@ -23,8 +23,9 @@ export interface LatitudesLayout {
   /** Base lines above the row. */
   readonly headingBase: number;
   readonly subheadingBase: number;
-  /** The colour key's bar; its numbers stand above it. */
-  readonly key: Box;
+  /** The bars of the colour keys of map and latitude-time picture; their numbers stand above them. */
+  readonly mapKey: Box;
+  readonly pictureKey: Box;
   readonly map: Box;
   readonly zonalMean: Box;
   readonly latitudeTime: Box;
@@ -42,6 +43,7 @@ export interface LayoutNeeds {
   readonly leftLabels: readonly string[];
   readonly mapHeading: string;
   readonly mapSubheading: string;
+  readonly pictureHeading: string;
   /** Width over height of the map in true proportion at its middle latitude. */
   readonly mapShape: number;
 }
@@ -92,9 +94,12 @@ export function latitudesLayout(size: FigureSize, needs: LayoutNeeds): Latitudes
 
   const topBeside = Math.round(subheadingBase + descentShare * small + 0.65 * small);
   const besides = rowWidths(frameHeightFrom(topBeside));
-  const keyWidth = Math.round(clamp(0.34 * besides.mapWidth, 7.5 * heading, 15 * heading));
-  const textWide = Math.max(textWidth(needs.mapHeading, heading, 700), textWidth(needs.mapSubheading, small, 400));
-  const isBeside = textWide + 2 * heading + keyWidth <= besides.mapWidth;
+  const narrower = Math.min(besides.mapWidth, besides.timeWidth);
+  const keyWidth = Math.round(clamp(0.34 * narrower, 7.5 * heading, 15 * heading));
+  const mapText = Math.max(textWidth(needs.mapHeading, heading, 700), textWidth(needs.mapSubheading, small, 400));
+  const room = 2 * heading + keyWidth;
+  const isBeside =
+    mapText + room <= besides.mapWidth && textWidth(needs.pictureHeading, heading, 700) + room <= besides.timeWidth;
   const keyHeight = Math.round(0.75 * small);
   const keyDrop = Math.ceil(1.25 * small + keyHeight + 0.5 * small);
   const top = isBeside ? topBeside : topBeside + keyDrop;
@@ -104,15 +109,27 @@ export function latitudesLayout(size: FigureSize, needs: LayoutNeeds): Latitudes
   const map = { x: left, y: top, width: mapWidth, height };
   const zonalMean = { x: map.x + mapWidth + panelGap, y: top, width: zonalWidth, height };
   const latitudeTime = { x: zonalMean.x + zonalWidth + panelGap, y: top, width: timeWidth, height };
-  const key = isBeside
-    ? {
-        x: left + mapWidth - keyWidth,
-        y: top - Math.round(0.65 * small) - keyHeight,
-        width: keyWidth,
-        height: keyHeight,
-      }
-    : { x: left, y: top - Math.round(0.5 * small) - keyHeight, width: mapWidth, height: keyHeight };
-  const shared = { sizes, margin, panelGap, headingBase, subheadingBase, key, map, zonalMean, latitudeTime };
+  const keyOver = (panel: Box): Box =>
+    isBeside
+      ? {
+          x: panel.x + panel.width - keyWidth,
+          y: top - Math.round(0.65 * small) - keyHeight,
+          width: keyWidth,
+          height: keyHeight,
+        }
+      : { x: panel.x, y: top - Math.round(0.5 * small) - keyHeight, width: panel.width, height: keyHeight };
+  const shared = {
+    sizes,
+    margin,
+    panelGap,
+    headingBase,
+    subheadingBase,
+    mapKey: keyOver(map),
+    pictureKey: keyOver(latitudeTime),
+    map,
+    zonalMean,
+    latitudeTime,
+  };
   if (!isFull) return shared;
 
   const lowerTop = Math.round(top + height + dropBelow + 1.1 * heading);

@@ -7,6 +7,7 @@ export interface Places {
   readonly desktopEntry: string;
   readonly preload: string;
   readonly engineEntry: string;
+  readonly workerEntry: string;
   readonly pageFolder: string;
   /** The study opened where none is named. */
   readonly sampleStudy: string;
@@ -28,6 +29,7 @@ export function findPlaces(from: string): Places {
     desktopEntry: path.join(root, "dist", "main", "desktop.js"),
     preload: path.join(root, "dist", "preload", "preload.cjs"),
     engineEntry: path.join(root, "dist", "main", "engine-process.js"),
+    workerEntry: path.join(root, "dist", "main", "worker.js"),
     pageFolder: path.join(root, "dist", "renderer"),
     sampleStudy: path.join(root, "sample-data", "halcyon.study.json"),
   };

@@ -118,7 +118,7 @@ async function everyDate(analysis: Analysis, pool: WorkerPool, job: Job): Promis
       );
       let start = 0;
       for (const block of blocks) {
-        block.forEach((planes, q) => whole[q].set(planes, start));
+        for (const [q, planes] of block.entries()) whole[q].set(planes, start);
         start += block[0].length;
       }
     });

@@ -15,7 +15,7 @@ import type { Workspace } from "../workspace";
 import type { Analysis } from "./analysis";
 import { version } from "./version";
 
-const require = createRequire(import.meta.url);
+const fromHere = createRequire(import.meta.url);
 const fontPackage = "@expo-google-fonts/atkinson-hyperlegible-next";
 
 /** Draws the figures the study names into `folder` and gives their paths within the result folder. */
@@ -79,7 +79,7 @@ export async function writeFigures(
 }
 
 function font(weight: 400 | 700, file: string) {
-  return { weight, bytes: new Uint8Array(readFileSync(require.resolve(`${fontPackage}/${file}`))), type: "font/ttf" };
+  return { weight, bytes: new Uint8Array(readFileSync(fromHere.resolve(`${fontPackage}/${file}`))), type: "font/ttf" };
 }
 
 /** The date with data nearest the middle of the record. */

@@ -1,3 +1,4 @@
+import { readdir } from "node:fs/promises";
 import { join } from "node:path";
 import type { OpenStudy, RunSummaryPlace } from "../../../core/contract/engine";
 import { figures } from "../../../core/figure/index";
@@ -25,6 +26,7 @@ export async function runStudy(
   const { open, folder, overwrite } = request;
   requireKnownFigures(open);
   await refuseExisting(folder, overwrite);
+  if (overwrite) await refuseForeignFolder(folder);
   const analysis = await analyse(workspace, open, job);
   const written = await writeFolderAtomically(folder, { overwrite }, async (stage) => {
     job.report({ step: "Writing results", done: 0, total: 1 });
@@ -44,6 +46,19 @@ export async function runStudy(
     return ["summary.json", ...files];
   });
   return { folder, files: written };
+}
+
+/** Only an earlier result, or an empty folder, may be replaced: everything in the old folder goes. */
+async function refuseForeignFolder(folder: string): Promise<void> {
+  const names: readonly string[] = await readdir(folder).catch(() => []);
+  if (names.length === 0 || names.includes("summary.json")) return;
+  throw new Fault({
+    tag: "output",
+    where: folder,
+    expected: "a folder that an earlier run wrote, with its summary.json",
+    got: "a folder with other files",
+    advice: "choose another folder; overwriting would delete what is in this one",
+  });
 }
 
 function requireKnownFigures({ study, path }: OpenStudy): void {
