@@ -19,6 +19,8 @@ export async function writeStudy(scenario: Scenario, path: string): Promise<stri
     region: { west: -150, east: -125, south: 20, north: 41.5 },
     period: { from: scenario.firstDate, to: lastDate },
   };
-  await writeFileWhole(path, `${JSON.stringify(study, null, 2)}\n`);
+  // Lists of one stay on their line, as the formatter of this repository has them.
+  const text = JSON.stringify(study, null, 2).replace(/\[\n\s+("[^"]+")\n\s+\]/g, "[$1]");
+  await writeFileWhole(path, `${text}\n`);
   return path;
 }
