@@ -10,7 +10,7 @@ export function GridChoice() {
   const record = useBenchState((state) => state.record);
   if (!study) return null;
   if (study.grids.length > 1) {
-    const choices = study.grids.map(({ id }) => ({ value: id, title: gridText(study, id, null) }));
+    const choices = study.grids.map(({ id }) => ({ value: id, title: gridText(study, id, null), short: `Grid ${id}` }));
     return <Segments label="Grid" value={grid} choices={choices} onChoose={(id) => bench.chooseGrid(id)} />;
   }
   const text = gridText(study, study.grids[0].id, record);

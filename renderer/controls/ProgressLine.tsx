@@ -6,7 +6,7 @@ interface ProgressLineProps {
   readonly label: string;
 }
 
-/** A bar with the step it stands at; without a known length the bar moves but claims nothing. */
+/** A bar with the step it stands at; without a known length the bar stays empty. */
 export function ProgressLine({ progress, label }: ProgressLineProps) {
   const known = progress.total > 0;
   return (

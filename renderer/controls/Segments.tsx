@@ -3,7 +3,8 @@ import { useId } from "react";
 interface SegmentsProps<Value extends string> {
   readonly label: string;
   readonly value: Value;
-  readonly choices: readonly { readonly value: Value; readonly title: string }[];
+  /** `short` stands in for the title where the window is narrow. */
+  readonly choices: readonly { readonly value: Value; readonly title: string; readonly short?: string }[];
   readonly onChoose: (value: Value) => void;
 }
 
@@ -13,7 +14,7 @@ export function Segments<Value extends string>({ label, value, choices, onChoose
   return (
     <div className="segments" role="radiogroup" aria-label={label}>
       {choices.map((choice) => (
-        <label key={choice.value}>
+        <label key={choice.value} title={choice.short && choice.title}>
           <input
             type="radio"
             name={name}
@@ -21,7 +22,14 @@ export function Segments<Value extends string>({ label, value, choices, onChoose
             checked={choice.value === value}
             onChange={() => onChoose(choice.value)}
           />
-          {choice.title}
+          {choice.short ? (
+            <>
+              <span className="when-wide">{choice.title}</span>
+              <span className="when-narrow">{choice.short}</span>
+            </>
+          ) : (
+            choice.title
+          )}
         </label>
       ))}
     </div>

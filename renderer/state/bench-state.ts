@@ -36,10 +36,14 @@ export interface BenchState {
   readonly cursor: Cursor | null;
   readonly playing: boolean;
   readonly record: RecordOverview | null;
+  /** What the record was read for (see recordKey): nothing is computed on the axes of another one. */
+  readonly recordFor: string;
   /** Follow the settings, which change more often than the record. */
   readonly cautions: readonly Caution[];
   readonly picture: Picture | null;
   readonly spectrum: SpectrumResult | null;
+  /** The picture is behind what was asked for. */
+  readonly computing: boolean;
   /** Opening and reading; null when nothing is under way. */
   readonly loading: Progress | null;
   /** Why there is no record, as a sentence; null while all is well. */
@@ -63,9 +67,11 @@ export const firstState: BenchState = {
   cursor: null,
   playing: false,
   record: null,
+  recordFor: "",
   cautions: [],
   picture: null,
   spectrum: null,
+  computing: false,
   loading: null,
   loadFault: null,
   writing: null,

@@ -5,7 +5,7 @@ import { type BandEdge, bandLimits, moveEdge } from "./band-edges";
 import { type BenchState, type BenchStore, firstState } from "./bench-state";
 import { clampIndex, stepLatitude } from "./cursor";
 import { type Drafts, throttled } from "./draft";
-import { sameRecord, withBand } from "./edit-study";
+import { recordKey, withBand } from "./edit-study";
 import { fields } from "./fields";
 import { commit, endGesture, type History, redo, undo } from "./history";
 import { type Loader, loader } from "./loader";
@@ -81,8 +81,9 @@ export function createBench(link: EngineLink, drafts: Drafts): Bench {
     keepDraft(next.present);
     const { grids } = next.present.study;
     if (!grids.some((grid) => grid.id === store.get().grid)) store.set({ grid: grids[0].id });
-    if (sameRecord(before.present, next.present) && store.get().record) drawn.refresh();
-    else void reading.load(false);
+    const key = recordKey(next.present, store.get().grid);
+    if (key === store.get().recordFor) drawn.refresh();
+    else if (key !== reading.reading) void reading.load();
   };
   const change = (step: (studies: History<OpenStudy>) => History<OpenStudy>): void => {
     const { studies } = store.get();
@@ -114,7 +115,7 @@ export function createBench(link: EngineLink, drafts: Drafts): Bench {
   const restore = async (open: OpenStudy): Promise<void> => {
     playing.stop();
     drawn.stop();
-    await reading.load(true);
+    await reading.load();
     if (store.get().studies?.present !== open) return;
     store.set({ notices: store.get().notices.filter((notice) => notice.heading !== engineStopped) });
     tell(
@@ -136,7 +137,7 @@ export function createBench(link: EngineLink, drafts: Drafts): Bench {
     chooseGrid(grid) {
       if (grid === store.get().grid) return;
       store.set({ grid });
-      void reading.load(true);
+      void reading.load();
     },
     chooseField(part) {
       store.set({ choice: { ...store.get().choice, ...part } });

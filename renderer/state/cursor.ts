@@ -28,18 +28,23 @@ export function clampIndex(index: number, length: number): number {
   return Math.min(length - 1, Math.max(0, Math.round(index)));
 }
 
-/** The cursor held to a record; a cursor of another record keeps its latitude where it can and starts mid-record. */
-export function fitCursor(
-  cursor: Cursor | null,
-  latitudes: ArrayLike<number>,
-  dates: number,
-  sameRecord: boolean,
-): Cursor {
-  const first = latitudes[0];
-  const last = latitudes[latitudes.length - 1];
+/** The two axes a cursor moves on. */
+interface CursorAxes {
+  readonly latitude: { readonly values: ArrayLike<number> };
+  readonly time: { readonly values: ArrayLike<number> };
+}
+
+/**
+ * The cursor of one record carried over to another: its latitude where that lies inside, else the middle one; the date
+ * nearest to its own. Without a cursor the middle of both axes.
+ */
+export function fitCursor(cursor: Cursor | null, from: CursorAxes | null, to: CursorAxes): Cursor {
+  const latitudes = to.latitude.values;
+  const days = to.time.values;
+  const [first, last] = [latitudes[0], latitudes[latitudes.length - 1]];
   const inside = cursor && cursor.latitude >= Math.min(first, last) && cursor.latitude <= Math.max(first, last);
   return {
     latitude: inside ? cursor.latitude : latitudes[latitudes.length >> 1],
-    dateIndex: cursor && sameRecord ? clampIndex(cursor.dateIndex, dates) : dates >> 1,
+    dateIndex: cursor && from ? nearestIndex(days, from.time.values[cursor.dateIndex]) : days.length >> 1,
   };
 }

@@ -20,17 +20,7 @@ export function withExtent(open: OpenStudy, region: Region | undefined, period: 
   return { ...open, study: { ...rest, ...(region ? { region } : {}), ...(period ? { period } : {}) } };
 }
 
-/** True where two studies read the same cells and dates of the same files. */
-export function sameRecord(a: OpenStudy, b: OpenStudy): boolean {
-  if (a === b) return true;
-  return recordKey(a) === recordKey(b);
-}
-
-function recordKey({ folder, study }: OpenStudy): string {
-  return JSON.stringify([folder, study.grids, study.region ?? null, study.period ?? null]);
-}
-
-/** Whether background is removed: on where any of its parts is. */
-export function backgroundOn(background: BackgroundSettings): boolean {
-  return background.mean || background.trend || background.annual || background.semiannual;
+/** Names the cells and dates that a study reads of one grid: equal where a loaded record can serve both. */
+export function recordKey({ folder, study }: OpenStudy, grid: string): string {
+  return JSON.stringify([folder, study.grids, study.region ?? null, study.period ?? null, grid]);
 }

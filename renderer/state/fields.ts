@@ -1,5 +1,6 @@
 import type { Engine, LatitudesResult, OpenStudy, RecordOverview, SpectrumResult } from "../../core/contract/engine";
 import type { BenchStore } from "./bench-state";
+import { recordKey } from "./edit-study";
 import { latestWins } from "./latest-wins";
 
 /** Keeps the drawn results in step with study, field choice and date. */
@@ -23,6 +24,7 @@ export function fields(store: BenchStore, engine: Engine, fail: (error: unknown)
   let askedRecord: RecordOverview | null = null;
   let askedSpectrum = "";
   let cautioned: OpenStudy | null = null;
+  let cautionedRecord: RecordOverview | null = null;
 
   const latitudes = latestWins<LatitudesQuestion, LatitudesResult>({
     run: ({ request }, signal) => engine.latitudes(request, { signal }),
@@ -33,6 +35,7 @@ export function fields(store: BenchStore, engine: Engine, fail: (error: unknown)
       asked = "";
       fail(error);
     },
+    onBusy: (computing) => store.set({ computing }),
   });
 
   const spectrum = latestWins<Parameters<Engine["spectrum"]>[0], SpectrumResult>({
@@ -52,10 +55,9 @@ export function fields(store: BenchStore, engine: Engine, fail: (error: unknown)
     fail,
   });
 
-  const refreshLatitudes = (): void => {
-    const { studies, record, grid, choice, cursor, columns } = store.get();
-    if (!studies || !record || !cursor) return;
-    const open = studies.present;
+  const refreshLatitudes = (open: OpenStudy, record: RecordOverview): void => {
+    const { grid, choice, cursor, columns } = store.get();
+    if (!cursor) return;
     const key = JSON.stringify([grid, choice, cursor.dateIndex, columns]);
     if (key === asked && open === askedStudy && record === askedRecord) return;
     asked = key;
@@ -64,10 +66,8 @@ export function fields(store: BenchStore, engine: Engine, fail: (error: unknown)
     latitudes.ask({ open, record, request: { open, grid, choice, dateIndex: cursor.dateIndex, columns } });
   };
 
-  const refreshSpectrum = (): void => {
-    const { studies, record, grid, choice } = store.get();
-    if (!studies || !record) return;
-    const open = studies.present;
+  const refreshSpectrum = (open: OpenStudy): void => {
+    const { grid, choice } = store.get();
     const key = spectrumKey(open, grid, choice.quantity);
     if (key === askedSpectrum) return;
     askedSpectrum = key;
@@ -75,25 +75,28 @@ export function fields(store: BenchStore, engine: Engine, fail: (error: unknown)
   };
 
   /** Cautions depend on the settings; asked for when a gesture has ended, not on its way. */
-  const refreshCautions = (): void => {
-    const { studies, record, grid } = store.get();
-    if (!studies || !record || studies.gesture !== null || studies.present === cautioned) return;
-    const isLoaded = cautioned === null;
-    cautioned = studies.present;
-    if (!isLoaded) cautions.ask({ open: studies.present, grid });
+  const refreshCautions = (open: OpenStudy, record: RecordOverview): void => {
+    if (open === cautioned) return;
+    cautioned = open;
+    // A record that has just been read brought its cautions along.
+    if (record === cautionedRecord) cautions.ask({ open, grid: store.get().grid });
+    cautionedRecord = record;
   };
 
   return {
     refresh() {
-      refreshLatitudes();
-      refreshSpectrum();
-      refreshCautions();
+      const { studies, record, recordFor, grid } = store.get();
+      if (!studies || !record || recordFor !== recordKey(studies.present, grid)) return;
+      refreshLatitudes(studies.present, record);
+      refreshSpectrum(studies.present);
+      if (studies.gesture === null) refreshCautions(studies.present, record);
     },
     stop() {
       latitudes.stop();
       spectrum.stop();
       cautions.stop();
       cautioned = null;
+      cautionedRecord = null;
       asked = "";
       askedStudy = null;
       askedSpectrum = "";

@@ -2,6 +2,7 @@ import type { Engine, OpenStudy, RecognisedFile } from "../../core/contract/engi
 import type { BenchStore } from "./bench-state";
 import { fitCursor } from "./cursor";
 import type { Drafts } from "./draft";
+import { recordKey } from "./edit-study";
 import { commit, startHistory } from "./history";
 import { noticeFromError } from "./notices";
 import { dataPaths } from "./paths";
@@ -9,8 +10,10 @@ import { dataPaths } from "./paths";
 /** Opening studies and reading records, one at a time: a newer request aborts the one under way. */
 export interface Loader {
   open(paths: readonly string[]): Promise<void>;
-  /** Reads the present study's record again; keeps cursor dates where `sameDates`. */
-  load(sameDates: boolean): Promise<void>;
+  /** Reads the present study's record; the cursor stays at its latitude and date where the record has them. */
+  load(): Promise<void>;
+  /** What is being read now (see recordKey); empty while nothing is. */
+  readonly reading: string;
   cancel(): void;
 }
 
@@ -26,10 +29,12 @@ export interface LoaderParts {
 
 export function loader({ store, engine, drafts, fail, tell, loaded }: LoaderParts): Loader {
   let running: AbortController | null = null;
+  let reading = "";
 
   const begin = (step: string): AbortController => {
     running?.abort();
     running = new AbortController();
+    reading = "";
     store.set({ loading: { step, done: 0, total: 0 }, loadFault: null });
     return running;
   };
@@ -46,22 +51,26 @@ export function loader({ store, engine, drafts, fail, tell, loaded }: LoaderPart
     } finally {
       if (running === controller) {
         running = null;
+        reading = "";
         store.set({ loading: null });
       }
     }
   };
 
-  const read = async (controller: AbortController, sameDates: boolean): Promise<void> => {
+  const read = async (controller: AbortController): Promise<void> => {
     const { studies, grid } = store.get();
     if (!studies) return;
     const { signal } = controller;
     const onProgress = (loading: { step: string; done: number; total: number }): void => {
       if (running === controller) store.set({ loading });
     };
+    const key = recordKey(studies.present, grid);
+    reading = key;
     const record = await engine.load({ open: studies.present, grid }, { signal, onProgress });
     if (running !== controller) return;
-    const cursor = fitCursor(store.get().cursor, record.latitude.values, record.time.values.length, sameDates);
-    store.set({ record, cautions: record.cautions, cursor });
+    const before = store.get();
+    const cursor = fitCursor(before.cursor, before.record, record);
+    store.set({ record, recordFor: key, cautions: record.cautions, cursor });
     loaded();
   };
 
@@ -88,15 +97,18 @@ export function loader({ store, engine, drafts, fail, tell, loaded }: LoaderPart
         if (draft)
           tell("Unsaved changes are back", "The last edits of this study had not been saved. Undo removes them.");
         void describe(controller, open, paths);
-        await read(controller, false);
+        await read(controller);
       });
     },
-    async load(sameDates) {
+    async load() {
       const controller = begin("Reading");
-      await attempt(controller, () => read(controller, sameDates));
+      await attempt(controller, () => read(controller));
     },
     cancel() {
       running?.abort();
+    },
+    get reading() {
+      return reading;
     },
   };
 }

@@ -29,7 +29,7 @@ export function NothingYet() {
         <p className="any-text">{fault}</p>
         {hasStudy ? (
           <div className="sheet-actions">
-            <Button kind="main" onPress={() => void bench.loader.load(true)}>
+            <Button kind="main" onPress={() => void bench.loader.load()}>
               Try again
             </Button>
             <Button onPress={() => bench.set({ view: "sources" })}>Look at the sources</Button>

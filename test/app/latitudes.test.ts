@@ -194,8 +194,9 @@ describe("the Latitudes view", () => {
   test("the profile can be read as a table", async () => {
     const { page } = shown;
     await page.getByText("Profile as a table").click();
-    const rows = await page.locator(".profile-table tbody tr").count();
-    expect(rows).toBeGreaterThan(10);
+    const rows = page.locator(".profile-table tbody tr");
+    await rows.first().waitFor();
+    expect(await rows.count()).toBeGreaterThan(10);
     expect(await page.locator(".profile-table tr.at-cursor").count()).toBe(1);
   });
 });

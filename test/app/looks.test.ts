@@ -56,6 +56,7 @@ describe("the window fits", () => {
           const figure = document.querySelector(".figure-pane")?.getBoundingClientRect() ?? whole;
           return [
             ...[...document.querySelectorAll("header *, .toolbar *")].filter((each) => outside(each, whole)),
+            ...[...document.querySelectorAll(".segments")].filter((each) => each.scrollWidth > each.clientWidth + 1),
             ...[...document.querySelectorAll(".scene text")].filter((each) => outside(each, figure)),
           ].map((each) => each.textContent);
         });

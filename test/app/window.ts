@@ -24,6 +24,8 @@ export async function openWindow(browser: Browser, address: string, options: Win
   const page = await context.newPage();
   const complaints: string[] = [];
   page.on("console", (message) => {
+    // The door's entrance page has no icon, which some browsers ask for all the same; the window's page names its own.
+    if (message.location().url.endsWith("/favicon.ico")) return;
     if (message.type() === "error" || message.type() === "warning") complaints.push(message.text());
   });
   page.on("pageerror", (error) => complaints.push(error.message));
@@ -53,14 +55,15 @@ export async function drawn(page: Page): Promise<void> {
   await steady(page);
 }
 
-/** Waits until the drawn pixels have not changed for a third of a second. */
+/** Waits until nothing is being computed and two looks a tenth of a second apart see the same pixels. */
 export async function steady(page: Page): Promise<void> {
   let before = "";
   for (let look = 0; look < 60; look++) {
+    await page.waitForTimeout(100);
+    await page.waitForSelector('.figure-pane[aria-busy="false"]', { timeout: 30_000 });
     const now = await rasterHash(page);
     if (now === before) return;
     before = now;
-    await page.waitForTimeout(330);
   }
   throw new Error("the figure does not come to rest");
 }

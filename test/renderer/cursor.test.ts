@@ -30,11 +30,19 @@ describe("the cursor", () => {
     expect(stepLatitude([7], 7, 3)).toBe(7);
   });
 
-  test("keeps its place over a reload of the same record and starts mid-record in another", () => {
-    const cursor = { latitude: 31.4, dateIndex: 250 };
-    expect(fitCursor(cursor, rising, 300, true)).toEqual(cursor);
-    expect(fitCursor(cursor, rising, 100, true).dateIndex).toBe(99);
-    expect(fitCursor(cursor, rising, 300, false)).toEqual({ latitude: 31.4, dateIndex: 150 });
-    expect(fitCursor({ latitude: -60, dateIndex: 0 }, rising, 300, false).latitude).toBe(30);
+  test("keeps its latitude and its date, not its index, in a record of other axes", () => {
+    const daily = {
+      latitude: { values: rising },
+      time: { values: Float64Array.from({ length: 300 }, (_, i) => 1000 + i) },
+    };
+    const tenDays = {
+      latitude: { values: falling },
+      time: { values: Float64Array.from({ length: 30 }, (_, i) => 1000 + 10 * i) },
+    };
+    const cursor = { latitude: 31.4, dateIndex: 252 };
+    expect(fitCursor(cursor, daily, daily)).toEqual(cursor);
+    expect(fitCursor(cursor, daily, tenDays)).toEqual({ latitude: 31.4, dateIndex: 25 });
+    expect(fitCursor({ latitude: -60, dateIndex: 299 }, daily, tenDays)).toEqual({ latitude: 30, dateIndex: 29 });
+    expect(fitCursor(null, null, daily)).toEqual({ latitude: 30, dateIndex: 150 });
   });
 });

@@ -1,9 +1,6 @@
 import type { Caution } from "../../../core/contract/engine";
 
-const standing =
-  "Geostrophic part of the flow only. Not for navigation: follow local rules and the judgement of licensed mariners.";
-
-/** What limits the numbers on screen. */
+/** What limits the numbers on screen: the standing caution about geostrophic currents first, then what applies here. */
 export function Cautions({ cautions }: { readonly cautions: readonly Caution[] }) {
   return (
     <section aria-label="Cautions">
@@ -14,7 +11,6 @@ export function Cautions({ cautions }: { readonly cautions: readonly Caution[] }
             {caution.text}
           </li>
         ))}
-        <li>{standing}</li>
       </ul>
     </section>
   );

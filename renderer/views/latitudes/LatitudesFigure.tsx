@@ -26,6 +26,7 @@ export function LatitudesFigure({ picture, ground }: LatitudesFigureProps) {
   const cursor = useBenchState((state) => state.cursor);
   const spectrum = useBenchState((state) => state.spectrum);
   const band = useBenchState((state) => state.studies?.present.study.band ?? picture.open.study.band);
+  const computing = useBenchState((state) => state.computing);
   const scene = useMemo(
     () =>
       size && size.width > 0 && size.height > 0 ? pictureScene(picture, spectrum, band, size, themes[ground]) : null,
@@ -55,6 +56,7 @@ export function LatitudesFigure({ picture, ground }: LatitudesFigureProps) {
       // biome-ignore lint/a11y/noNoninteractiveTabindex: the figure takes the arrow keys, so it must hold the focus
       tabIndex={0}
       role="application"
+      aria-busy={computing}
       aria-label="Latitudes figure; press ? for keys"
     >
       {scene ? <SceneView scene={scene} without={heldMarks} /> : null}

@@ -3,6 +3,7 @@ import { useBench, useBenchState } from "../../app/bench-context";
 import { Button } from "../../controls/Button";
 import { Segments } from "../../controls/Segments";
 import { Select } from "../../controls/Select";
+import { progressText } from "../../text/progress";
 import { recordText } from "../../text/record";
 import { quantityChoices } from "./quantities";
 import { TransportIcon } from "./TransportIcon";
@@ -18,6 +19,7 @@ export function Toolbar() {
   const choice = useBenchState((state) => state.choice);
   const cursor = useBenchState((state) => state.cursor);
   const record = useBenchState((state) => state.record);
+  const loading = useBenchState((state) => state.loading);
   const playing = useBenchState((state) => state.playing);
   const dates = record?.time.values.length ?? 0;
   const index = cursor?.dateIndex ?? 0;
@@ -54,7 +56,13 @@ export function Toolbar() {
           {record && cursor ? formatDate(record.time.calendar, record.time.values[cursor.dateIndex]) : ""}
         </span>
       </div>
-      {record ? <span className="period">{recordText(record)}</span> : null}
+      {record && !loading ? <span className="period">{recordText(record)}</span> : null}
+      {loading ? (
+        <span className="loading" role="status">
+          {progressText(loading)}
+          <Button onPress={() => bench.loader.cancel()}>Cancel</Button>
+        </span>
+      ) : null}
     </div>
   );
 }

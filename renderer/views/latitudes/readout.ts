@@ -38,7 +38,7 @@ export function pointerReadout(picture: Picture, pointed: Pointed): Readout | nu
     const cell = mapValueAt(picture, latitude, longitude);
     const place = `${formatLatitude(cell.latitude, 2)} ${formatLongitude(cell.longitude, 2)}`;
     return {
-      value: valueText(mapStyle(picture), cell.value),
+      value: cell.isOcean ? valueText(mapStyle(picture), cell.value) : "never any data",
       place: `${place}, ${dateText(picture, picture.result.dateIndex)}`,
     };
   }

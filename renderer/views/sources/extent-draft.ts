@@ -1,3 +1,4 @@
+import { formatNumber } from "../../../core/figure/format";
 import type { Period, Region } from "../../../core/study/schema";
 
 /** Region and period as typed; all four or two left blank means "all there is". */
@@ -46,7 +47,8 @@ export function readExtent(draft: ExtentDraft): ExtentReading {
   for (const side of noRegion ? [] : sides) {
     const number = draft[side].trim() === "" ? Number.NaN : Number(draft[side].replace("−", "-").replace(",", "."));
     const [least, most] = bounds[side];
-    if (!(number >= least && number <= most)) faults[side] = `A number of degrees from ${least} to ${most}.`;
+    if (!(number >= least && number <= most))
+      faults[side] = `A number of degrees from ${formatNumber(least, 0)} to ${formatNumber(most, 0)}.`;
     region[side] = number;
   }
   if (!faults.south && !faults.north && !noRegion && region.north <= region.south) {
