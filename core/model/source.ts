@@ -3,7 +3,7 @@ import type { Axis, TimeAxis } from "./axis";
 /** What the height is measured from; decides whether mean jets can be in it. */
 export type HeightReference = "geoid" | "mean-sea-level" | "ellipsoid" | "unknown";
 
-/** How many cells of the sampled plane each masking rule removed (asks: show the masked count per rule). */
+/** How many cells each masking rule removed. */
 export interface MaskCounts {
   readonly fill: number;
   readonly validRange: number;

@@ -1,12 +1,12 @@
 """Dates and day counts of every CF calendar by cftime, the oracle for core/model/calendar.ts and time-units.ts.
 
-Run: python3 test/reference/cftime_dates.py > test/reference/cftime_dates.json
 Years are astronomical (has_year_zero=True) so that the six calendars count alike.
 """
-import json
 import random
 
 import cftime
+
+from reference_file import write_or_check
 
 CALENDARS = ["standard", "proleptic_gregorian", "julian", "noleap", "all_leap", "360_day"]
 random.seed(20310524)
@@ -66,16 +66,20 @@ def units_rows(calendar):
     return out
 
 
-months = []
-for value in [0, 1, 2.5, 14, -3]:
-    moment = cftime.num2date(value, "months since 2000-01-16", calendar="360_day", has_year_zero=True)
-    epoch = cftime.datetime(1970, 1, 1, calendar="360_day", has_year_zero=True)
-    delta = moment - epoch
-    months.append({"value": value, "days": delta.days + delta.seconds / 86400})
+def months_rows():
+    out = []
+    for value in [0, 1, 2.5, 14, -3]:
+        moment = cftime.num2date(value, "months since 2000-01-16", calendar="360_day", has_year_zero=True)
+        epoch = cftime.datetime(1970, 1, 1, calendar="360_day", has_year_zero=True)
+        delta = moment - epoch
+        out.append({"value": value, "days": delta.days + delta.seconds / 86400})
+    return out
 
-print(json.dumps({
-    "cftime": cftime.__version__,
-    "dates": {calendar: rows(calendar) for calendar in CALENDARS},
-    "units": {calendar: units_rows(calendar) for calendar in CALENDARS},
-    "months360": months,
-}))
+
+if __name__ == "__main__":
+    write_or_check(__file__, {
+        "cftime": cftime.__version__,
+        "dates": {calendar: rows(calendar) for calendar in CALENDARS},
+        "units": {calendar: units_rows(calendar) for calendar in CALENDARS},
+        "months360": months_rows(),
+    })

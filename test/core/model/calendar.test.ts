@@ -17,7 +17,7 @@ interface DateRow {
   readonly seconds: number;
 }
 
-const oracle = JSON.parse(readFileSync(new URL("../../reference/cftime_dates.json", import.meta.url), "utf8")) as {
+const oracle = JSON.parse(readFileSync(new URL("../../reference/cftime-dates.json", import.meta.url), "utf8")) as {
   dates: Record<Calendar, DateRow[]>;
 };
 

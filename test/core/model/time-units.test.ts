@@ -4,7 +4,7 @@ import type { Calendar } from "../../../core/model/calendar";
 import { calendars, formatDay } from "../../../core/model/calendar";
 import { daysFromValue, parseTimeUnits } from "../../../core/model/time-units";
 
-const oracle = JSON.parse(readFileSync(new URL("../../reference/cftime_dates.json", import.meta.url), "utf8")) as {
+const oracle = JSON.parse(readFileSync(new URL("../../reference/cftime-dates.json", import.meta.url), "utf8")) as {
   units: Record<Calendar, { units: string; value: number; days: number }[]>;
   months360: { value: number; days: number }[];
 };

@@ -112,6 +112,7 @@ export function madeUpInput(shape: MadeUpShape = {}): LatitudesInput {
       columnDates: Int32Array.from({ length: dates }, (_, date) => date),
       filterEnd: Uint8Array.from({ length: dates }, (_, date) => (date < 20 || date >= dates - 20 ? 1 : 0)),
       limits: [-0.118, 0.118],
+      pictureLimits: [-0.04, 0.04],
       response: {
         frequency,
         amplitude: frequency.map((value) => 1 / (1 + (value * 85) ** 12) / (1 + (1 / (value * 560)) ** 12)),
