@@ -7,10 +7,14 @@ import {
   meanAndDeviation,
 } from "../numeric/serial-correlation";
 
+/** Fewest effective samples for which an interval is given. */
+const leastEffectiveSize = 2;
+
 /**
  * Mean over time of each latitude's series with its 95 % confidence half-width, Student's t over the effective sample size:
  * AR(1) for series as they stand, products of autocorrelations for band-passed ones (`inBand`), which AR(1) does not describe.
- * `series[row * dates + t]`, NaN for gaps; a row with fewer than 3 valid dates is NaN.
+ * `series[row * dates + t]`, NaN for gaps; a row with fewer than 3 valid dates is NaN, and so is the interval of one with fewer
+ * than 2 effective samples, where Student's t would stretch without bound.
  */
 export function meanProfile(series: Float64Array, rows: number, dates: number, inBand: boolean): Profile {
   const profile = {
@@ -26,7 +30,8 @@ export function meanProfile(series: Float64Array, rows: number, dates: number, i
     profile.mean[row] = mean;
     profile.effectiveSize[row] = size;
     profile.dates[row] = count;
-    profile.half95[row] = size > 1 ? (studentQuantile(0.975, size - 1) * deviation) / Math.sqrt(size) : Number.NaN;
+    profile.half95[row] =
+      size >= leastEffectiveSize ? (studentQuantile(0.975, size - 1) * deviation) / Math.sqrt(size) : Number.NaN;
   }
   return profile;
 }

@@ -11,6 +11,7 @@ import { Job } from "./job";
 import { latitudesResult } from "./latitudes";
 import { openStudy } from "./open-study";
 import { runStudy } from "./run/run-study";
+import { sourceFiles } from "./source-files";
 import { spectrumResult } from "./spectrum";
 import { Workspace } from "./workspace";
 
@@ -75,13 +76,17 @@ function studyFrom({ study, folder }: OpenStudy, target: string): Study {
 
 async function recognise(paths: readonly string[], job: Job): Promise<RecognisedFile[]> {
   const found: RecognisedFile[] = [];
-  for (const [i, path] of paths.entries()) {
-    job.throwIfCancelled();
-    job.report({ step: "Reading headers", done: i, total: paths.length });
+  for (const [i, pattern] of paths.entries()) {
+    let path = pattern;
     try {
-      found.push({ path, report: await describeFile(path) });
+      for (const file of await sourceFiles([pattern], dirname(pattern), "file")) {
+        path = file;
+        job.throwIfCancelled();
+        job.report({ step: "Reading headers", done: i, total: paths.length });
+        found.push({ path, report: await describeFile(path) });
+      }
     } catch (error) {
-      if (!isUserFault(error)) throw error;
+      if (!isUserFault(error) || error.tag === "cancelled") throw error;
       found.push({ path, refused: faultData(error) });
     }
   }

@@ -24,15 +24,19 @@ export function zonalMeanPanel(input: LatitudesInput, layout: LatitudesLayout): 
   };
 }
 
+/** Intervals wider than this many times the lines' own reach run out of the frame, so that the lines keep their shape. */
+const mostBandReach = 2.5;
+
 function widestExcursion({ result }: LatitudesInput): number {
   const { mean, half95 } = result.profile;
-  let widest = 0;
-  for (let row = 0; row < mean.length; row++) {
-    for (const value of [Math.abs(mean[row]) + half95[row], Math.abs(mean[row]), Math.abs(result.onDate[row])]) {
-      if (value > widest && Number.isFinite(value)) widest = value;
-    }
-  }
-  return widest;
+  const widest = (values: (row: number) => number) =>
+    mean.reduce((most, _, row) => (values(row) > most && Number.isFinite(values(row)) ? values(row) : most), 0);
+  const lines = Math.max(
+    widest((row) => Math.abs(mean[row])),
+    widest((row) => Math.abs(result.onDate[row])),
+  );
+  const band = widest((row) => Math.abs(mean[row]) + half95[row]);
+  return Math.max(lines, lines > 0 ? Math.min(band, mostBandReach * lines) : band);
 }
 
 /** Mean over the period in ink with its 95 % band, the date's zonal mean in amber. Breaks where a value is NaN. */

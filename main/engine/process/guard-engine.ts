@@ -46,6 +46,7 @@ export function guardEngine(engine: Engine, grants: Grants): Engine {
     const real: string[] = [];
     for (const location of requested) {
       real.push(await grants.readable(location));
+      for (const meant of await pathsOfPattern(path.sep, location)) await grants.readable(meant);
       // Of a folder, what lies in it is read too, and may be a link to elsewhere.
       for (const inner of await pathsOfPattern(location, "*")) await grants.readable(inner);
     }
