@@ -57,7 +57,7 @@ export function createBench(link: EngineLink, drafts: Drafts): Bench {
 
   const drawn = fields(store, link.engine, fail);
   const reading = loader({ store, engine: link.engine, drafts, fail, tell, loaded: () => drawn.refresh() });
-  const writing = results(store, link.engine, drafts, fail, tell);
+  const writing = results(store, link.engine, drafts, tell);
 
   const setDate = (index: number): void => {
     const { cursor, record } = store.get();
@@ -82,8 +82,10 @@ export function createBench(link: EngineLink, drafts: Drafts): Bench {
     const { grids } = next.present.study;
     if (!grids.some((grid) => grid.id === store.get().grid)) store.set({ grid: grids[0].id });
     const key = recordKey(next.present, store.get().grid);
-    if (key === store.get().recordFor) drawn.refresh();
-    else if (key !== reading.reading) void reading.load();
+    if (key === store.get().recordFor) {
+      reading.abandon();
+      drawn.refresh();
+    } else if (key !== reading.reading) void reading.load();
   };
   const change = (step: (studies: History<OpenStudy>) => History<OpenStudy>): void => {
     const { studies } = store.get();

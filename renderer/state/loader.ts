@@ -14,7 +14,10 @@ export interface Loader {
   load(): Promise<void>;
   /** What is being read now (see recordKey); empty while nothing is. */
   readonly reading: string;
+  /** At the person's wish: the view says so. */
   cancel(): void;
+  /** Because what was being read is no longer wanted: as if it had never been asked for. */
+  abandon(): void;
 }
 
 export interface LoaderParts {
@@ -106,6 +109,12 @@ export function loader({ store, engine, drafts, fail, tell, loaded }: LoaderPart
     },
     cancel() {
       running?.abort();
+    },
+    abandon() {
+      running?.abort();
+      running = null;
+      reading = "";
+      store.set({ loading: null, loadFault: null });
     },
     get reading() {
       return reading;

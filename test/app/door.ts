@@ -4,8 +4,8 @@ import path from "node:path";
 import { fileURLToPath } from "node:url";
 
 const root = fileURLToPath(new URL("../..", import.meta.url));
-const command = path.join(process.env.STRAKE_TMP_ROOT ?? root, "dist/main/strake.js");
-export const sampleStudy = process.env.STRAKE_TMP_STUDY ?? path.join(root, "sample-data/halcyon.study.json");
+const command = path.join(root, "dist/main/strake.js");
+export const sampleStudy = path.join(root, "sample-data/halcyon.study.json");
 
 /** The loopback door of the built application, started for a test. */
 export interface Door {

@@ -85,6 +85,33 @@ describe("what goes wrong is told in sentences", () => {
     );
   });
 
+  test("hostile text in a data file is shown as text", async () => {
+    const known = "Simulated sea-surface height of the invented Halcyon Basin";
+    const title = hostile.slice(0, 50).padEnd(known.length, ".");
+    await withStudy(
+      (study) => {
+        study.grids = [{ id: "B", files: ["grid/halcyon-b.nc"] }];
+        study.tracks = [];
+        study.band = { filter: "none" };
+      },
+      async (file) => {
+        // Of the same length, so that the classic format's offsets stay right.
+        const data = path.join(path.dirname(file), "grid/halcyon-b.nc");
+        const bytes = readFileSync(data, "latin1");
+        expect(bytes).toContain(known);
+        writeFileSync(data, bytes.replace(known, title), "latin1");
+        await withWindow([file], async ({ page, complaints }) => {
+          await drawn(page);
+          await page.getByRole("tab", { name: "Sources" }).click();
+          await page.locator(".file-head", { hasText: '<img src=x onerror="document.title=1">' }).waitFor();
+          expect(await page.locator("#root img, #root b").count()).toBe(0);
+          expect(await page.title()).not.toBe("1");
+          expect(complaints).toEqual([]);
+        });
+      },
+    );
+  });
+
   test("a killed engine is back within five seconds, the study as it was, and the window says so", async () => {
     await withWindow([sampleStudy], async ({ page }, door) => {
       await drawn(page);

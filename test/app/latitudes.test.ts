@@ -31,7 +31,12 @@ async function slider(name: "shortestDays" | "longestDays") {
   return { handle, days: async () => Number(await handle.getAttribute("aria-valuenow")) };
 }
 
-async function dragEdge(name: "shortestDays" | "longestDays", byPixels: number): Promise<void> {
+/** Drags an edge across; `held` runs while the button is still down. */
+async function dragEdge(
+  name: "shortestDays" | "longestDays",
+  byPixels: number,
+  held: () => Promise<void> = async () => {},
+): Promise<void> {
   const { page } = shown;
   const grip = await page.locator(`[data-edge="${name}"] .grip`).boundingBox();
   if (!grip) throw new Error("the band has no handle");
@@ -39,6 +44,7 @@ async function dragEdge(name: "shortestDays" | "longestDays", byPixels: number):
   await page.mouse.move(x, y);
   await page.mouse.down();
   for (let step = 1; step <= 12; step++) await page.mouse.move(x + (byPixels * step) / 12, y);
+  await held();
   await page.mouse.up();
 }
 
@@ -64,7 +70,10 @@ describe("the Latitudes view", () => {
     const before = [await panelPixels(page, "map"), await panelPixels(page, "latitude-time")];
     const { days } = await slider("shortestDays");
     const daysBefore = await days();
-    await dragEdge("shortestDays", -60);
+    await dragEdge("shortestDays", -60, async () => {
+      await steady(page);
+      expect((await panelPixels(page, "map")).hash).not.toBe(before[0].hash);
+    });
     await steady(page);
     expect(await days()).toBeGreaterThan(daysBefore);
     expect((await panelPixels(page, "map")).hash).not.toBe(before[0].hash);

@@ -136,6 +136,21 @@ describe("the bench", () => {
     expect(state().loadFault).toBeNull();
   });
 
+  test("a region taken back while it is being read is not put in place afterwards", async () => {
+    const { bench, state, atRest } = makeBench();
+    await atRest();
+    const { record, studies } = state();
+    if (!studies) throw new Error("no study is open");
+    bench.edit(withExtent(studies.present, region, undefined));
+    expect(state().loading).not.toBeNull();
+    bench.undo();
+    expect(state().loading).toBeNull();
+    // Longer than the stand-in takes to read.
+    await new Promise((resolve) => setTimeout(resolve, 200));
+    expect(state().record).toBe(record);
+    expect(state().notices).toEqual([]);
+  });
+
   test("an engine started anew has the study reopened, settings and cursor kept, and the window is told", async () => {
     const { bench, calls, served, state, until, atRest } = makeBench();
     await atRest();

@@ -2,7 +2,7 @@ import { useBenchState } from "../../app/bench-context";
 import { ProgressLine } from "../../controls/ProgressLine";
 import { CoverageBar } from "./CoverageBar";
 import { ExtentForm } from "./ExtentForm";
-import { FileCard } from "./FileCard";
+import { FileList } from "./FileList";
 import { OpenPaths } from "./OpenPaths";
 import { RecordFacts } from "./RecordFacts";
 
@@ -33,7 +33,7 @@ export function SourcesView() {
           {files.length === 0 ? (
             <p className="quiet">{open ? "Looking at the study's files …" : "No files are open yet."}</p>
           ) : (
-            files.map((file) => <FileCard key={file.path} file={file} />)
+            <FileList files={files} />
           )}
         </section>
       </div>

@@ -1,0 +1,24 @@
+import { mkdirSync } from "node:fs";
+import { fileURLToPath } from "node:url";
+import { launchBrowser } from "./browser";
+import { sampleStudy, startDoor } from "./door";
+
+/** Takes the README's picture from the running app: `npm run pictures`, after a build. */
+async function takePictures(): Promise<void> {
+  const folder = fileURLToPath(new URL("pictures", import.meta.url));
+  mkdirSync(folder, { recursive: true });
+  const door = await startDoor([sampleStudy]);
+  const browser = await launchBrowser();
+  try {
+    const page = await browser.newPage({ viewport: { width: 1440, height: 900 }, colorScheme: "light" });
+    await page.goto(door.address);
+    await page.getByText("Which periods to keep").waitFor({ timeout: 60_000 });
+    await page.waitForTimeout(1500);
+    await page.screenshot({ path: `${folder}/latitudes.png` });
+  } finally {
+    await browser.close();
+    await door.stop();
+  }
+}
+
+await takePictures();
