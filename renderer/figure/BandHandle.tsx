@@ -9,6 +9,10 @@ interface BandHandleProps {
   readonly panel: PanelFrame;
   /** Pixel of the edge. */
   readonly x: number;
+  /** Middle of the part to take hold of. */
+  readonly gripY: number;
+  /** The other handle is so near that only the grip may be taken hold of, not the whole line. */
+  readonly crowded: boolean;
   /** Period in days at a pixel of the overlay. */
   readonly daysAt: (x: number) => number;
   readonly onMove: (days: number) => void;
@@ -18,10 +22,9 @@ interface BandHandleProps {
 const names = { shortestDays: "Shortest period kept", longestDays: "Longest period kept" } as const;
 
 /** One end of the pass band: dragged with the pointer or moved with the arrow keys. */
-export function BandHandle({ edge, days, range, panel, x, daysAt, onMove, onEnd }: BandHandleProps) {
+export function BandHandle({ edge, days, range, panel, x, gripY, crowded, daysAt, onMove, onEnd }: BandHandleProps) {
   /** Pointer offset and scale at the grab: the axis may widen under a moving edge, which must not feed back. */
   const grab = useRef<{ readonly offset: number; readonly daysAt: (x: number) => number } | null>(null);
-  const middle = panel.y + panel.height / 2;
 
   const onPointerDown = (event: PointerEvent<SVGGElement>): void => {
     if (event.button !== 0) return;
@@ -63,9 +66,15 @@ export function BandHandle({ edge, days, range, panel, x, daysAt, onMove, onEnd 
       onKeyDown={onKeyDown}
       onKeyUp={onEnd}
     >
-      <rect className="reach" x={x - 9} y={panel.y - 4} width={18} height={panel.height + 8} />
+      <rect
+        className="reach"
+        x={x - 9}
+        y={crowded ? gripY - 15 : panel.y - 4}
+        width={18}
+        height={crowded ? 30 : panel.height + 8}
+      />
       <line className="edge-line" x1={x} x2={x} y1={panel.y} y2={panel.y + panel.height} />
-      <rect className="grip" x={x - 5} y={middle - 14} width={10} height={28} rx={3} />
+      <rect className="grip" x={x - 5} y={gripY - 14} width={10} height={28} rx={3} />
     </g>
   );
 }

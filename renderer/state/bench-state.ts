@@ -53,6 +53,8 @@ export interface BenchState {
   /** Most columns the latitude-time picture can show. */
   readonly columns: number;
   readonly keysShown: boolean;
+  /** Paths typed to be opened; kept while the view changes, so that a slip can be mended. */
+  readonly pathsText: string;
 }
 
 export const firstState: BenchState = {
@@ -78,6 +80,7 @@ export const firstState: BenchState = {
   notices: [],
   columns: 600,
   keysShown: false,
+  pathsText: "",
 };
 
 /** What the parts of the bench share: reading and replacing the state, and the engine's calls. */

@@ -96,7 +96,17 @@ export function loader({ store, engine, drafts, fail, tell, loaded }: LoaderPart
         if (running !== controller) return;
         const studies = draft ? commit(startHistory(open), draft) : startHistory(open);
         const grid = open.study.grids[0].id;
-        store.set({ studies, saved: open, grid, files: [], record: null, picture: null, spectrum: null, cursor: null });
+        store.set({
+          studies,
+          saved: open,
+          grid,
+          files: [],
+          pathsText: "",
+          record: null,
+          picture: null,
+          spectrum: null,
+          cursor: null,
+        });
         if (draft)
           tell("Unsaved changes are back", "The last edits of this study had not been saved. Undo removes them.");
         void describe(controller, open, paths);

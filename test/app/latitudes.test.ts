@@ -91,6 +91,10 @@ describe("the Latitudes view", () => {
     const [short, long] = [await slider("shortestDays"), await slider("longestDays")];
     await dragEdge("shortestDays", -3000);
     expect(await short.days()).toBe((await long.days()) - 1);
+    // Where they meet both can still be taken hold of.
+    const met = await long.days();
+    await dragEdge("longestDays", -40);
+    expect(await long.days()).toBeGreaterThan(met);
     await dragEdge("shortestDays", 3000);
     const least = Number(await short.handle.getAttribute("aria-valuemin"));
     expect(await short.days()).toBeGreaterThanOrEqual(least);

@@ -13,10 +13,12 @@ export function CursorReadout({ picture }: { readonly picture: Picture }) {
   if (!cursor) return null;
   const { result } = picture;
   const row = rowAt(picture, cursor.latitude);
-  const style = meanStyle(picture);
+  const { units, ...numbers } = meanStyle(picture);
+  // The unit stands once above, so that no row grows onto a second line while values change.
+  const style = { ...numbers, units: "" };
   const entries = [
     [dateText(picture, result.dateIndex), valueText(style, result.onDate[row])],
-    ["Mean of the period", intervalText(style, result.profile.mean[row], result.profile.half95[row])],
+    ["Mean ± 95 %", intervalText(style, result.profile.mean[row], result.profile.half95[row])],
     ["Independent samples", formatNumber(result.profile.effectiveSize[row], 0)],
     ["Dates that entered", formatNumber(result.profile.dates[row], 0)],
   ];
@@ -24,7 +26,10 @@ export function CursorReadout({ picture }: { readonly picture: Picture }) {
     <section aria-label="At the cursor">
       <div>
         <h2>At {formatLatitude(cursor.latitude, 2)}</h2>
-        <p className="quiet">{quantityText(result.choice.quantity).title}, zonal mean, 95 % interval</p>
+        <p className="quiet">
+          {quantityText(result.choice.quantity).title}, zonal mean{units === "" ? "" : ", "}
+          <Units text={units} />
+        </p>
       </div>
       <dl className="readout">
         {entries.map(([title, value]) => (

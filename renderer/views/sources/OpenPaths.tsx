@@ -1,4 +1,3 @@
-import { useState } from "react";
 import { useBench, useBenchState } from "../../app/bench-context";
 import { Button } from "../../controls/Button";
 import { TextField } from "../../controls/TextField";
@@ -9,7 +8,7 @@ export function OpenPaths() {
   const bench = useBench();
   const desktop = useBenchState((state) => state.door === "desktop");
   const busy = useBenchState((state) => state.loading !== null);
-  const [text, setText] = useState("");
+  const text = useBenchState((state) => state.pathsText);
   const paths = pathsFromText(text);
   const choose = async (what: "data" | "folder"): Promise<void> => {
     try {
@@ -38,7 +37,7 @@ export function OpenPaths() {
       <TextField
         title="Paths of a study or of data files, one a line"
         value={text}
-        onChange={setText}
+        onChange={(pathsText) => bench.set({ pathsText })}
         lines={3}
         placeholder="/data/heights/2031.nc"
       />
