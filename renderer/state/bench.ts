@@ -108,22 +108,21 @@ export function createBench(link: EngineLink, drafts: Drafts): Bench {
         if (welcome.paths.length > 0) void reading.open(welcome.paths);
         return;
       }
-      if (again) void restore(studies.present);
+      if (again) restore();
     },
     onOpened: (paths) => void reading.open(paths),
   });
 
   /** A new engine has forgotten its records: the present study's is read again. */
-  const restore = async (open: OpenStudy): Promise<void> => {
+  const restore = (): void => {
     playing.stop();
     drawn.stop();
-    await reading.load();
-    if (store.get().studies?.present !== open) return;
     store.set({ notices: store.get().notices.filter((notice) => notice.heading !== engineStopped) });
     tell(
       "The engine was started again",
-      "Your study is open as you left it. Results that were being written must be started again.",
+      "Your study is open as you left it; its record is read again. Results that were being written must be started again.",
     );
+    void reading.load();
   };
 
   return {
