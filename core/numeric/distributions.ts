@@ -46,16 +46,84 @@ export function studentCumulative(value: number, degrees: number): number {
   return value > 0 ? 1 - tail : tail;
 }
 
+/** Probability that |t| is at least |value|: the two-sided p value, kept accurate where it is tiny. */
+export function studentTwoSided(value: number, degrees: number): number {
+  return incompleteBeta(degrees / (degrees + value * value), degrees / 2, 0.5);
+}
+
 /** Quantile of Student's t for a probability in (0, 1); NaN for degrees of freedom that are not positive. */
 export function studentQuantile(probability: number, degrees: number): number {
   if (!(degrees > 0) || !(probability > 0 && probability < 1)) return Number.NaN;
   if (probability < 0.5) return -studentQuantile(1 - probability, degrees);
+  return risingRoot((value) => studentCumulative(value, degrees) - probability);
+}
+
+/**
+ * Regularised incomplete gamma functions P(a, x) and Q(a, x) = 1 - P, each accurate where it is small, for a > 0 and x >= 0.
+ * Ref: NIST DLMF 8.11.4 (series) and 8.9.2 (continued fraction, by Lentz's method).
+ */
+export function incompleteGamma(a: number, x: number): { readonly lower: number; readonly upper: number } {
+  if (x <= 0) return { lower: 0, upper: 1 };
+  if (x === Number.POSITIVE_INFINITY) return { lower: 1, upper: 0 };
+  const front = Math.exp(a * Math.log(x) - x - logGamma(a));
+  if (x < a + 1) {
+    let term = 1 / a;
+    let sum = term;
+    for (let n = 1; n <= 10000 && term > 1e-17 * sum; n++) {
+      term *= x / (a + n);
+      sum += term;
+    }
+    const lower = Math.min(1, front * sum);
+    return { lower, upper: 1 - lower };
+  }
+  let denominator = x + 1 - a;
+  let c = 1e300;
+  let d = 1 / denominator;
+  let fraction = d;
+  for (let n = 1; n <= 10000; n++) {
+    const numerator = -n * (n - a);
+    denominator += 2;
+    d = 1 / (numerator * d + denominator);
+    c = denominator + numerator / c;
+    fraction *= c * d;
+    if (Math.abs(c * d - 1) < 1e-16) break;
+  }
+  const upper = Math.min(1, front * fraction);
+  return { lower: 1 - upper, upper };
+}
+
+/** Quantile of chi-squared for a probability in (0, 1); NaN for degrees of freedom that are not positive. */
+export function chiSquaredQuantile(probability: number, degrees: number): number {
+  if (!(degrees > 0) || !(probability > 0 && probability < 1)) return Number.NaN;
+  return risingRoot((value) => {
+    const { lower, upper } = incompleteGamma(degrees / 2, value / 2);
+    return probability < 0.5 ? lower - probability : 1 - probability - upper;
+  });
+}
+
+/** Probability that a standard normal variable is below `value`, accurate in both tails. */
+export function normalCumulative(value: number): number {
+  const { lower, upper } = incompleteGamma(0.5, (value * value) / 2);
+  return value < 0 ? upper / 2 : 0.5 + lower / 2;
+}
+
+/** Quantile of the standard normal distribution for a probability in (0, 1); NaN outside. */
+export function normalQuantile(probability: number): number {
+  if (!(probability > 0 && probability < 1)) return Number.NaN;
+  if (probability === 0.5) return 0;
+  if (probability > 0.5) return -normalQuantile(1 - probability);
+  return -risingRoot((value) => probability - normalCumulative(-value));
+}
+
+/** Positive root of a rising function by halving, to the last digits of float64. */
+function risingRoot(difference: (value: number) => number): number {
   let low = 0;
   let high = 1;
-  while (studentCumulative(high, degrees) < probability && high < 1e150) high *= 2;
-  for (let i = 0; i < 200 && high - low > 1e-14 * high; i++) {
+  while (difference(high) < 0 && high < 1e150) high *= 2;
+  for (let i = 0; i < 1100 && high - low > 1e-15 * high; i++) {
     const middle = (low + high) / 2;
-    if (studentCumulative(middle, degrees) < probability) low = middle;
+    if (middle === low || middle === high) break;
+    if (difference(middle) < 0) low = middle;
     else high = middle;
   }
   return (low + high) / 2;

@@ -21,6 +21,39 @@ export function fourierTransform(real: Float64Array, imaginary?: Float64Array): 
   return transform(real, imaginary ?? new Float64Array(length));
 }
 
+/** Inverse of `fourierTransform`: exp(+2 pi i jk / n), divided by n. */
+export function inverseFourierTransform(real: Float64Array, imaginary: Float64Array): ComplexSequence {
+  // Swapping the parts before and after turns the forward transform into its conjugate.
+  const swapped = fourierTransform(imaginary, real);
+  const scale = 1 / real.length;
+  return { real: swapped.imaginary.map((v) => v * scale), imaginary: swapped.real.map((v) => v * scale) };
+}
+
+/** Forward transform of a real row-major plane along both axes; exp(-2 pi i (row l / rows + column k / columns)), no scaling. */
+export function planeTransform(plane: Float64Array, rows: number, columns: number): ComplexSequence {
+  const real = new Float64Array(plane.length);
+  const imaginary = new Float64Array(plane.length);
+  for (let row = 0; row < rows; row++) {
+    const line = fourierTransform(plane.slice(row * columns, (row + 1) * columns));
+    real.set(line.real, row * columns);
+    imaginary.set(line.imaginary, row * columns);
+  }
+  const lineReal = new Float64Array(rows);
+  const lineImaginary = new Float64Array(rows);
+  for (let column = 0; column < columns; column++) {
+    for (let row = 0; row < rows; row++) {
+      lineReal[row] = real[row * columns + column];
+      lineImaginary[row] = imaginary[row * columns + column];
+    }
+    const line = fourierTransform(lineReal, lineImaginary);
+    for (let row = 0; row < rows; row++) {
+      real[row * columns + column] = line.real[row];
+      imaginary[row * columns + column] = line.imaginary[row];
+    }
+  }
+  return { real, imaginary };
+}
+
 function isPowerOfTwo(length: number): boolean {
   return length > 1 && (length & (length - 1)) === 0;
 }

@@ -1,15 +1,17 @@
-/** Mean and standard deviation (n - 1) of the valid samples; two passes; NaN where too few. */
+import { compensatedSum } from "./statistics/compensated-sum";
+
+/**
+ * Mean and standard deviation (n - 1) of the valid samples; NaN where too few. Compensated sums in two passes, the second one
+ * corrected for the rounding of the mean, so that a small spread on a large mean keeps its digits.
+ * Ref: Chan, Golub & LeVeque 1983, Am. Stat. 37, 242-247 (corrected two-pass).
+ */
 export function meanAndDeviation(series: Float64Array): { mean: number; deviation: number; count: number } {
-  let count = 0;
-  let sum = 0;
-  for (const value of series) {
-    if (Number.isNaN(value)) continue;
-    sum += value;
-    count++;
-  }
-  const mean = count > 0 ? sum / count : Number.NaN;
-  let squares = 0;
-  for (const value of series) if (!Number.isNaN(value)) squares += (value - mean) * (value - mean);
+  const valid = series.filter((value) => !Number.isNaN(value));
+  const count = valid.length;
+  const mean = count > 0 ? compensatedSum(valid) / count : Number.NaN;
+  const apart = valid.map((value) => value - mean);
+  const left = compensatedSum(apart);
+  const squares = compensatedSum(apart.map((value) => value * value)) - (left * left) / count;
   return { mean, deviation: count > 1 ? Math.sqrt(squares / (count - 1)) : Number.NaN, count };
 }
 
