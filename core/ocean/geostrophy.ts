@@ -1,3 +1,4 @@
+import { blendAtEquator } from "./equator";
 import { eastwardDerivative, northwardDerivative } from "./gradients";
 import type { GridGeometry } from "./grid-geometry";
 
@@ -8,7 +9,8 @@ export interface VelocityPlanes {
 
 /**
  * Geostrophic velocity in m s-1 from a height plane in metres: u = -(g/f) d(height)/dy, v = (g/f) d(height)/dx.
- * Row-major rows × columns. NaN where the height is, where no difference fits, and in the blanked belt at the equator.
+ * Row-major rows × columns. NaN where the height is, where no difference fits, and in the blanked belt at the equator;
+ * with a blend planned the belt at the equator holds blended values instead (see blendAtEquator for its NaN rules).
  */
 export function geostrophicVelocity(height: Float64Array, geometry: GridGeometry): VelocityPlanes {
   return {
@@ -17,11 +19,18 @@ export function geostrophicVelocity(height: Float64Array, geometry: GridGeometry
   };
 }
 
-/** Turns a height slope into a velocity in place: times sign × g/f, NaN in the blanked belt. Returns the same array. */
+/**
+ * Turns a height slope into a velocity in place: times sign × g/f. In the belt at the equator NaN, or with a blend planned
+ * the blended value. Returns the same array.
+ */
 export function scaledByGravityOverCoriolis(slope: Float64Array, geometry: GridGeometry, sign: 1 | -1): Float64Array {
-  const { rows, columns, gravity, coriolis, blanked } = geometry;
+  const { rows, columns, gravity, coriolis, blanked, equatorBlend } = geometry;
+  const isBlended = new Set(equatorBlend?.rows);
+  if (equatorBlend) blendAtEquator(slope, geometry, equatorBlend, sign);
   for (let row = 0; row < rows; row++) {
-    const factor = blanked[row] ? Number.NaN : (sign * gravity[row]) / coriolis[row];
+    if (isBlended.has(row)) continue;
+    const isBlank = blanked[row] && !equatorBlend;
+    const factor = isBlank ? Number.NaN : (sign * gravity[row]) / coriolis[row];
     for (let i = row * columns; i < (row + 1) * columns; i++) slope[i] *= factor;
   }
   return slope;

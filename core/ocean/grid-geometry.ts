@@ -11,11 +11,15 @@ import {
   metresPerRadianNorth,
   planetaryVorticityGradient,
 } from "./earth";
+import { type EquatorBlend, type EquatorBlendSettings, planEquatorBlend } from "./equator";
 
 export interface GeometrySettings extends EarthSettings {
   readonly stencil: StencilPoints;
-  /** Rows within this many degrees of the equator carry no geostrophic value. */
+  /** Rows within this many degrees of the equator carry no geostrophic value (unless blended). */
   readonly equatorDegrees: number;
+  /** "blank" (default) leaves the belt empty; "blend" fills it by the beta-plane solution, see equator.ts. */
+  readonly equator?: "blank" | "blend";
+  readonly equatorBlend?: EquatorBlendSettings;
 }
 
 /** All that differencing needs to know of a grid; one entry a row where an array. */
@@ -33,23 +37,27 @@ export interface GridGeometry {
   readonly coriolis: Float64Array;
   readonly beta: Float64Array;
   readonly gravity: Float64Array;
-  /** 1 where the row lies within the blanked belt. */
+  /** 1 where the row lies within `equatorDegrees` of the equator: what divides by f has no value there. */
   readonly blanked: Uint8Array;
+  /** How velocities are blended across the equator; null where the belt is blank. */
+  readonly equatorBlend: EquatorBlend | null;
+  /** Why a blend that was asked for cannot be made, so that the belt is blank; else empty. */
+  readonly equatorNote: string;
 }
 
 const degree = Math.PI / 180;
 
 /**
- * Metric, Coriolis parameter, gravity and difference weights for a grid. Latitudes may ascend or descend and be uneven.
- * Errors: a cell that touches a pole (its metric vanishes), fewer than 3 latitudes or longitudes.
+ * Metric, Coriolis parameter, gravity and difference weights for a grid. Latitudes may ascend or descend; both axes
+ * may be uneven, and longitudes periodic. Errors: a cell that touches a pole (its metric vanishes), fewer than 3 latitudes or longitudes.
  */
 export function gridGeometry(axes: GridAxes, settings: GeometrySettings, where: string): GridGeometry {
   const { latitude, longitude } = axes;
   requireThree(latitude, "latitudes", where);
   requireThree(longitude, "longitudes", where);
   const rows = latitude.values.length;
-  const halfCell = Math.abs(latitude.step) / 2;
-  for (const value of latitude.values) {
+  latitude.values.forEach((value, row) => {
+    const halfCell = halfCellDegrees(latitude, row);
     if (Math.abs(value) + halfCell > 90 + 1e-9) {
       throw new Fault({
         tag: "region",
@@ -59,7 +67,11 @@ export function gridGeometry(axes: GridAxes, settings: GeometrySettings, where: 
         advice: `keep the region within ${90 - 2 * halfCell} degrees of the equator`,
       });
     }
-  }
+  });
+  const { blend, reason } =
+    settings.equator === "blend"
+      ? planEquatorBlend(latitude, settings, settings.equatorBlend)
+      : { blend: null, reason: "" };
   const perRow = (compute: (latitudeDegrees: number) => number) => latitude.values.map(compute);
   return {
     rows,
@@ -76,7 +88,16 @@ export function gridGeometry(axes: GridAxes, settings: GeometrySettings, where: 
     blanked: Uint8Array.from(latitude.values, (value) =>
       value === 0 || Math.abs(value) < settings.equatorDegrees ? 1 : 0,
     ),
+    equatorBlend: blend,
+    equatorNote: reason,
   };
+}
+
+/** Half the step, or on an uneven axis half the way to the nearest neighbour. */
+function halfCellDegrees({ values, step, even }: Axis, row: number): number {
+  if (even) return Math.abs(step) / 2;
+  const neighbours = [values[row - 1], values[row + 1]].filter((value) => value !== undefined);
+  return Math.min(...neighbours.map((value) => Math.abs(value - values[row]))) / 2;
 }
 
 function requireThree(axis: Axis, what: string, where: string): void {

@@ -2,6 +2,7 @@ import { Fault } from "../../model/errors";
 import type { GridGeometry } from "../grid-geometry";
 import type { PlaneLookup, Quantity } from "./define";
 import { quantities } from "./index";
+import { intermediates } from "./intermediates";
 
 /** The quantity of that id. Error: Fault "request" naming the known ids. */
 export function quantityById(id: string): Quantity {
@@ -16,13 +17,22 @@ export function quantityById(id: string): Quantity {
   });
 }
 
-/** Lazy lookup of every quantity on one height plane: each is computed once, when first asked for. */
-export function planesFrom(height: Float64Array, geometry: GridGeometry): PlaneLookup {
-  const known = new Map<string, Float64Array>([["height", height]]);
+/**
+ * Lazy lookup of every quantity on one height plane (metres, row-major rows × columns): each is computed once, when first
+ * asked for. `anomaly` is the base plane "height-anomaly": height minus each cell's mean over the period; leave it out
+ * where the height has no mean in it, as a band has not, and the height itself is taken. Its constant parts do not matter.
+ * Error: Fault "request" for an id that is none of them.
+ */
+export function planesFrom(height: Float64Array, geometry: GridGeometry, anomaly: Float64Array = height): PlaneLookup {
+  const known = new Map<string, Float64Array>([
+    ["height", height],
+    ["height-anomaly", anomaly],
+  ]);
   const lookup: PlaneLookup = (id) => {
     const ready = known.get(id);
     if (ready) return ready;
-    const plane = quantityById(id).compute(lookup, geometry);
+    const compute = intermediates[id] ?? quantityById(id).compute;
+    const plane = compute(lookup, geometry);
     known.set(id, plane);
     return plane;
   };

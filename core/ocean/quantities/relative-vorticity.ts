@@ -1,5 +1,6 @@
 import { relativeVorticity } from "../vorticity";
 import { defineQuantity } from "./define";
+import { gradientsFrom, velocityFrom } from "./intermediates";
 
 /** Relative vorticity of the geostrophic flow in s-1. NaN rules: see relativeVorticity. */
 export const vorticity = defineQuantity({
@@ -11,5 +12,5 @@ export const vorticity = defineQuantity({
   linear: true,
   signed: true,
   inputs: ["u", "v"],
-  compute: (plane, geometry) => relativeVorticity({ u: plane("u"), v: plane("v") }, geometry),
+  compute: (plane, geometry) => relativeVorticity(velocityFrom(plane), geometry, gradientsFrom(plane)),
 });

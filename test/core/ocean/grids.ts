@@ -53,6 +53,8 @@ export function fPlane(options: {
     beta: every(0),
     gravity: every(gravity),
     blanked: new Uint8Array(cells),
+    equatorBlend: null,
+    equatorNote: "",
   };
 }
 

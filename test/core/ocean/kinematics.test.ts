@@ -49,7 +49,10 @@ describe("a Bickley jet (U0 = 0.1 m/s, L = 100 km, at 30 degrees; closed form)",
     const vorticity = relativeVorticity(velocity, geometry);
     for (let row = 10; row < 231; row++) {
       const cell = row * 241 + 120;
-      expectClose(velocity.u[cell], 0.1 / Math.cosh(x[row] / 100e3) ** 2, { absolute: 1e-7, because: "sixth-order truncation" });
+      expectClose(velocity.u[cell], 0.1 / Math.cosh(x[row] / 100e3) ** 2, {
+        absolute: 1e-7,
+        because: "sixth-order truncation",
+      });
     }
     const largest = vorticity.reduce((most, value) => (Number.isNaN(value) ? most : Math.max(most, value)), 0);
     expectClose(largest, 7.698003589195011e-7, { relative: 1e-3, because: "the crest lies between two cells" });
@@ -70,7 +73,10 @@ describe("plane wave on an f-plane", () => {
       const close = { relative: 1e-6, absolute: 1e-9, because: "eighth order at 60 cells a wavelength" };
       expectClose(velocity.u[i], ((g * A) / f) * l * Math.sin(phase(i)), close);
       expectClose(velocity.v[i], (-(g * A) / f) * k * Math.sin(phase(i)), close);
-      expectClose(vorticity[i], (-(g * A) / f) * (k * k + l * l) * Math.cos(phase(i)), { absolute: 1e-12, because: "same" });
+      expectClose(vorticity[i], (-(g * A) / f) * (k * k + l * l) * Math.cos(phase(i)), {
+        absolute: 1e-12,
+        because: "same",
+      });
     }
   });
 });
@@ -95,7 +101,10 @@ describe("on the sphere", () => {
   test("solid rotation u = U0 cos(latitude) has vorticity 2 U0 sin(latitude) / R = 1.56961e-7 s-1 at 30 degrees", () => {
     const u = planeFrom(axes, (_, latitude) => Math.cos(latitude * degree));
     const vorticity = relativeVorticity({ u, v: new Float64Array(u.length) }, geometry);
-    expectClose(vorticity[20 * 30 + 15], 1.569612305760477e-7, { relative: 1e-9, because: "sixth order at half a degree" });
+    expectClose(vorticity[20 * 30 + 15], 1.569612305760477e-7, {
+      relative: 1e-9,
+      because: "sixth order at half a degree",
+    });
     for (let row = 0; row < 41; row++) {
       const truth = (2 * Math.sin(axes.latitude.values[row] * degree)) / R;
       expectClose(vorticity[row * 30 + 3], truth, { relative: 2e-4, because: "second order at the edge rows" });
@@ -112,9 +121,15 @@ describe("on the sphere", () => {
     for (let column = 6; column < 24; column++) {
       const i = row * 30 + column;
       const divergence = across[i] + along[i] - v[i] * geometry.convergence[row];
-      expectClose(divergence / v[i], -geometry.beta[row] / geometry.coriolis[row], { relative: 1e-6, because: "sixth order" });
+      expectClose(divergence / v[i], -geometry.beta[row] / geometry.coriolis[row], {
+        relative: 1e-6,
+        because: "sixth order",
+      });
     }
-    expectClose((0.1 * geometry.beta[row]) / geometry.coriolis[row], 2.718648e-8, { relative: 1e-6, because: "printed digits" });
+    expectClose((0.1 * geometry.beta[row]) / geometry.coriolis[row], 2.718648e-8, {
+      relative: 1e-6,
+      because: "printed digits",
+    });
   });
 
   test.each([
@@ -142,7 +157,10 @@ describe("on the sphere", () => {
       const size = Math.round(24 / step) + 1;
       const grid = evenAxes({ west: -12, south: 30, step, columns: size, rows: size });
       const local = gridGeometry(grid, { ...sphere, stencil: points }, "test");
-      const { u, v } = geostrophicVelocity(planeFrom(grid, (a, p) => wave(a * degree, p * degree)), local);
+      const { u, v } = geostrophicVelocity(
+        planeFrom(grid, (a, p) => wave(a * degree, p * degree)),
+        local,
+      );
       const vorticity = relativeVorticity({ u, v }, local);
       const errors = [0, 0, 0];
       // Only points common to both grids and clear of narrowed stencils.
@@ -160,13 +178,21 @@ describe("on the sphere", () => {
     const [coarse, fine] = [worst(1), worst(0.5)];
     coarse.forEach((error, k) => {
       const observed = Math.log2(error / fine[k]);
-      expectClose(observed, order, { absolute: 0.1, because: "the bound asked of an observed order" }, ["u", "v", "vorticity"][k]);
+      expectClose(
+        observed,
+        order,
+        { absolute: 0.1, because: "the bound asked of an observed order" },
+        ["u", "v", "vorticity"][k],
+      );
     });
   });
 
   test("the belt within 5 degrees of the equator is blank, rows outside are not", () => {
     const belt = evenAxes({ west: 0, south: -8, step: 1, columns: 5, rows: 17 });
-    const { u } = geostrophicVelocity(planeFrom(belt, (a, p) => 0.01 * a + 0.02 * p), gridGeometry(belt, sphere, "test"));
+    const { u } = geostrophicVelocity(
+      planeFrom(belt, (a, p) => 0.01 * a + 0.02 * p),
+      gridGeometry(belt, sphere, "test"),
+    );
     belt.latitude.values.forEach((latitude, row) => {
       expect(Number.isNaN(u[row * 5 + 2]), `${latitude}°`).toBe(Math.abs(latitude) < 5);
     });
@@ -202,8 +228,14 @@ describe("on the sphere", () => {
     const shifted = evenAxes({ west: -170, south: 30, step: 10, columns: 36, rows: 5 });
     const wave = (a: number, p: number) => Math.sin(2 * a * degree) * Math.cos(p * degree);
     const points: StencilPoints = 9;
-    const one = geostrophicVelocity(planeFrom(global, wave), gridGeometry(global, { ...sphere, stencil: points }, "test"));
-    const two = geostrophicVelocity(planeFrom(shifted, wave), gridGeometry(shifted, { ...sphere, stencil: points }, "test"));
+    const one = geostrophicVelocity(
+      planeFrom(global, wave),
+      gridGeometry(global, { ...sphere, stencil: points }, "test"),
+    );
+    const two = geostrophicVelocity(
+      planeFrom(shifted, wave),
+      gridGeometry(shifted, { ...sphere, stencil: points }, "test"),
+    );
     for (let column = 0; column < 36; column++) {
       const other = (column + 17) % 36;
       expectClose(two.v[2 * 36 + other], one.v[2 * 36 + column], { absolute: 1e-10, because: "rounding of the sine" });

@@ -2,6 +2,7 @@ import { readdirSync, readFileSync } from "node:fs";
 import fc from "fast-check";
 import { describe, expect, test } from "vitest";
 import { gridGeometry } from "../../../../core/ocean/grid-geometry";
+import { basePlanes } from "../../../../core/ocean/quantities/define";
 import { planesFrom, quantityById } from "../../../../core/ocean/quantities/evaluate";
 import { quantities } from "../../../../core/ocean/quantities/index";
 import { expectAllClose } from "../../../expect-close";
@@ -26,7 +27,7 @@ describe("the quantity registry", () => {
     for (const key of ["id", "variable", "title"] as const) {
       expect(new Set(quantities.map((quantity) => quantity[key])).size).toBe(quantities.length);
     }
-    const ids = quantities.map((quantity) => quantity.id);
+    const ids: string[] = [...quantities.map((quantity) => quantity.id), ...basePlanes];
     for (const quantity of quantities) for (const input of quantity.inputs) expect(ids).toContain(input);
   });
 
