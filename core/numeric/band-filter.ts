@@ -15,19 +15,31 @@ export const leastWeightShare = 0.25;
 /** Share of weight below which a filtered value is given but marked as a filter end. */
 export const trustedWeightShare = 0.9;
 
+/** Cut-offs in samples; null leaves that side open: only `shortestSamples` makes a low-pass, only `longestSamples` a high-pass. */
+export interface CutOffs {
+  readonly shortestSamples: number | null;
+  readonly longestSamples: number | null;
+}
+
 /**
- * Lanczos band-pass for periods between two cut-offs, in samples; Infinity for `longest` makes a low-pass. The half-width is
- * the longest finite cut-off (or the shortest, for a low-pass), so that the window's first zero lies at that period; the
- * rule n >= 1.3 / (f2 - f1) [Duchon 1979, from memory] is met for every band whose edges differ by more than a factor of 2.3.
+ * Lanczos low-, high- or band-pass. The half-width is the longest cut-off, or twice the shortest for a low-pass, so that
+ * the window's first zero lies at or beyond that period; the rule n >= 1.3 / (f2 - f1) [Duchon 1979, from memory] is met for
+ * every band whose edges differ by more than a factor of 2.3. Amplitude response is about one half at the cut-offs. Both
+ * sides open: a filter of half-width 0 that changes nothing. Meaningful for cut-offs of at least two samples, in order.
  */
-export function lanczosBand(shortestSamples: number, longestSamples: number): BandFilter {
-  const slowest = Number.isFinite(longestSamples) ? longestSamples : shortestSamples * 2;
-  const halfWidth = Math.max(2, Math.ceil(slowest));
+export function lanczosFilter({ shortestSamples, longestSamples }: CutOffs): BandFilter {
+  if (shortestSamples === null && longestSamples === null) return { halfWidth: 0, fast: null, slow: null };
+  const halfWidth = Math.max(2, Math.ceil(longestSamples ?? 2 * (shortestSamples ?? 1)));
   return {
     halfWidth,
-    fast: lanczosLowPass(1 / shortestSamples, halfWidth),
-    slow: Number.isFinite(longestSamples) ? lanczosLowPass(1 / longestSamples, halfWidth) : null,
+    fast: shortestSamples === null ? null : lanczosLowPass(1 / shortestSamples, halfWidth),
+    slow: longestSamples === null ? null : lanczosLowPass(1 / longestSamples, halfWidth),
   };
+}
+
+/** Lanczos band-pass for periods between two cut-offs, in samples; Infinity for `longest` makes a low-pass. */
+export function lanczosBand(shortestSamples: number, longestSamples: number): BandFilter {
+  return lanczosFilter({ shortestSamples, longestSamples: Number.isFinite(longestSamples) ? longestSamples : null });
 }
 
 /** Amplitude response at a frequency in cycles a sample. */

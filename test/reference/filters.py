@@ -1,4 +1,5 @@
-"""Butterworth sections, zero-phase filtering, running mean, least-squares slopes, detrending, periodograms and loess.
+"""Butterworth sections, zero-phase filtering (narrow bands too), running means, least-squares slopes, detrending,
+periodograms, loess along a line and over a plane.
 
 Sources: scipy.signal (butter, sosfiltfilt, savgol_coeffs, savgol_filter, detrend, periodogram, lombscargle); running-mean
 response is textbook; local quadratic regression with tricube weights (Cleveland & Devlin 1988 [from memory]) by a direct
@@ -37,6 +38,51 @@ def butterworth(series):
             cases.append(dict(kind=kind, order=order, cutDays=cuts, edgesOfNyquist=edges, sections=sections,
                               padLength=int(pad), initialStates=signal.sosfilt_zi(sections), output=output))
     return cases
+
+
+def narrow_band():
+    """0.001 to 0.002 cycles a sample; the input is stored as its formula, every 40th output and both ends are kept."""
+    t = np.arange(4000)
+    noise = ((t * 7919) % 1009) / 1009 - 0.5
+    series = 0.5 + t / 16384 + 0.1 * np.cos(2 * np.pi * t / 700 + 0.3) + 0.05 * np.sin(2 * np.pi * t / 90) + 0.1 * noise
+    shown = np.unique(np.concatenate([np.arange(0, 4000, 40), np.arange(20), 3980 + np.arange(20)]))
+    cases = []
+    for order in (1, 2, 3, 4, 5):
+        sections = signal.butter(order, [0.002, 0.004], "bandpass", output="sos")
+        output = signal.sosfiltfilt(sections, series)
+        assert np.isfinite(output).all()
+        cases.append(dict(order=order, output=output[shown]))
+    return dict(formula="0.5 + t/16384 + 0.1 cos(2 pi t/700 + 0.3) + 0.05 sin(2 pi t/90) + 0.1 (((7919 t) mod 1009)/1009 - 0.5)",
+                length=4000, cutSamples=[1000.0, 500.0], shown=shown, cases=cases)
+
+
+def wide_and_odd(series):
+    """Odd orders, cut-offs near Nyquist's, and a band so wide that a band-pass pole pair is real."""
+    cases = []
+    for kind, order, cuts in (("lowpass", 1, [5.0]), ("lowpass", 5, [2.5]), ("highpass", 1, [30.0]), ("highpass", 5, [2.5]),
+                              ("bandpass", 1, [60.0, 2.2]), ("bandpass", 3, [40.0, 2.5]), ("bandpass", 5, [30.0, 8.0])):
+        edges = [2 / cut for cut in cuts]
+        sections = signal.butter(order, edges if len(edges) > 1 else edges[0], kind, output="sos")
+        frequency = np.linspace(0.01, 0.49, 13)
+        _, response = signal.sosfreqz(sections, worN=2 * np.pi * frequency)
+        cases.append(dict(kind=kind, order=order, cutSamples=cuts, frequency=frequency, power=np.abs(response) ** 2,
+                          output=signal.sosfiltfilt(sections, series)[::7]))
+    return cases
+
+
+def centred_even_mean():
+    """18 weeks centred on a weekly sample: 19 weights with halves at both ends."""
+    weights = np.ones(19) / 18
+    weights[[0, -1]] /= 2
+    offsets = np.arange(-9, 10)
+
+    def gain(f):
+        return np.sum(weights * np.cos(2 * np.pi * f * offsets))
+
+    frequency = np.linspace(0.002, 0.5, 25)
+    return dict(points=18, weights=weights, frequency=frequency, response=[gain(f) for f in frequency],
+                halfAmplitudeDays=7 / optimize.brentq(lambda f: gain(f) - 0.5, 1e-4, 1 / 18),
+                halfPowerDays=7 / optimize.brentq(lambda f: gain(f) ** 2 - 0.5, 1e-4, 1 / 18))
 
 
 def running_mean():
@@ -143,6 +189,48 @@ def loess_cases(series):
     ]
 
 
+def loess_surface():
+    """Local quadratic surface, tricube in sqrt((x/hx)^2 + (y/hy)^2); x along each source row's own parallel."""
+    random = np.random.default_rng(2015)
+    rows, columns, step_north, span_east, span_north = 12, 18, 27.8, 160.0, 110.0
+    spacing = 27.8 * np.cos(np.radians(20 + 0.25 * np.arange(rows)))
+    plane = quantised(random.normal(0, 0.05, (rows, columns)) + 0.01 * np.arange(columns) + 0.02 * np.arange(rows)[:, None])
+    plane[2:5, 10:13] = np.nan
+    plane[random.integers(0, rows, 14), random.integers(0, columns, 14)] = np.nan
+    cases = []
+    for periodic in (False, True):
+        out = np.full((rows, columns), np.nan)
+        for row in range(rows):
+            for column in range(columns):
+                offset = np.arange(columns) - column
+                if periodic:
+                    offset = (offset + columns // 2) % columns - columns // 2
+                x = offset[None, :] * spacing[:, None] / span_east
+                y = ((np.arange(rows) - row) * step_north / span_north)[:, None] + 0 * x
+                distance = np.hypot(x, y)
+                near = (distance < 1) & np.isfinite(plane)
+                root = (1 - distance[near] ** 3) ** 1.5
+                x, y = x[near], y[near]
+                matrix = np.stack([np.ones_like(x), x, y, x * x, x * y, y * y], axis=1)
+                out[row, column] = np.linalg.lstsq(matrix * root[:, None], plane[near] * root, rcond=None)[0][0]
+        cases.append(dict(periodic=periodic, output=out.ravel()))
+
+    def gain(wavelength):
+        """What is left of a wave along one axis, wavelength in half-spans, on a fine disk without gaps."""
+        edge = np.linspace(-1, 1, 161)
+        x, y = (axis.ravel() for axis in np.meshgrid(edge, edge))
+        distance = np.minimum(np.hypot(x, y), 1)
+        weight = (1 - distance**3) ** 3
+        matrix = np.stack([np.ones_like(x), x, y, x * x, x * y, y * y], axis=1)
+        kernel = np.linalg.solve((matrix * weight[:, None]).T @ matrix, (matrix * weight[:, None]).T)[0]
+        return np.sum(kernel * np.cos(2 * np.pi * x / wavelength))
+
+    halves = [optimize.brentq(lambda q: gain(q) - level, 0.8, 4) for level in (0.5, np.sqrt(0.5))]
+    return dict(rows=rows, columns=columns, northStepKilometres=step_north, eastSpacingKilometres=spacing,
+                eastSpanKilometres=span_east, northSpanKilometres=span_north, input=plane.ravel(), cases=cases,
+                halfAmplitudeInSpans=halves[0], halfPowerInSpans=halves[1])
+
+
 def corrected_cuts():
     """Edge factor in the prewarped domain that puts -3 dB of the forward-and-back filter at the named period."""
     rows = []
@@ -165,11 +253,15 @@ if __name__ == "__main__":
         "stepDays": STEP_DAYS,
         "input": data,
         "butterworth": butterworth(data),
+        "wideAndOdd": wide_and_odd(data),
+        "narrowBand": narrow_band(),
         "halfPowerCuts": corrected_cuts(),
         "runningMean": running_mean(),
+        "centredEvenMean": centred_even_mean(),
         "leastSquaresSlopes": least_squares_slopes(data),
         "detrended": {kind: signal.detrend(data, type=kind) for kind in ("constant", "linear")},
         "periodograms": spectra(data),
         "lombScargle": lomb_scargle(),
         "loess": loess_cases(data),
+        "loessSurface": loess_surface(),
     })

@@ -1,6 +1,6 @@
 import fc from "fast-check";
 import { describe, expect, test } from "vitest";
-import { bandResponse, filterSeries, lanczosBand, weightShare } from "../../../core/numeric/band-filter";
+import { bandResponse, filterSeries, lanczosBand, lanczosFilter, weightShare } from "../../../core/numeric/band-filter";
 import { lanczosLowPass, lanczosRawWeights, symmetricResponse } from "../../../core/numeric/lanczos";
 import { expectAllClose, expectClose } from "../../expect-close";
 
@@ -9,7 +9,11 @@ const printed = { absolute: 1e-4, because: "check values printed to four decimal
 describe("Lanczos weights (Duchon 1979; values computed with numpy)", () => {
   test("24 weights a side at a cut-off of 18 samples", () => {
     const raw = lanczosRawWeights(1 / 18, 24);
-    expectClose(raw.reduce((a, b) => a + b, 0), 0.9907859, { absolute: 1e-7, because: "printed digits" });
+    expectClose(
+      raw.reduce((a, b) => a + b, 0),
+      0.9907859,
+      { absolute: 1e-7, because: "printed digits" },
+    );
     expectClose(raw[24], 0.1111111, printed);
     expectClose(raw[25], 0.1085578, printed);
     const weights = lanczosLowPass(1 / 18, 24);
@@ -31,7 +35,8 @@ describe("Lanczos weights (Duchon 1979; values computed with numpy)", () => {
       [360, 0.9986],
       [540, 0.4945],
     ];
-    for (const [period, response] of table) expectClose(bandResponse(filter, 1 / period), response, printed, `${period} d`);
+    for (const [period, response] of table)
+      expectClose(bandResponse(filter, 1 / period), response, printed, `${period} d`);
   });
 });
 
@@ -86,15 +91,88 @@ describe("the band-pass", () => {
 
   test("is linear, and picks the same values when asked for some samples only", () => {
     fc.assert(
-      fc.property(fc.array(fc.double({ min: -5, max: 5, noNaN: true }), { minLength: 60, maxLength: 120 }), (values) => {
-        const short = lanczosBand(4, 20);
-        const series = Float64Array.from(values);
-        const out = filterSeries(series, short);
-        const doubled = filterSeries(series.map((value) => -2 * value), short);
-        expectAllClose(doubled, out.map((value) => -2 * value), { absolute: 1e-12, because: "rounding" });
-        const some = Int32Array.from([0, 7, 31, 59]);
-        expect([...filterSeries(series, short, some)]).toEqual([...some].map((t) => out[t]));
-      }),
+      fc.property(
+        fc.array(fc.double({ min: -5, max: 5, noNaN: true }), { minLength: 60, maxLength: 120 }),
+        (values) => {
+          const short = lanczosBand(4, 20);
+          const series = Float64Array.from(values);
+          const out = filterSeries(series, short);
+          const doubled = filterSeries(
+            series.map((value) => -2 * value),
+            short,
+          );
+          expectAllClose(
+            doubled,
+            out.map((value) => -2 * value),
+            { absolute: 1e-12, because: "rounding" },
+          );
+          const some = Int32Array.from([0, 7, 31, 59]);
+          expect([...filterSeries(series, short, some)]).toEqual([...some].map((t) => out[t]));
+        },
+      ),
     );
+  });
+});
+
+describe("open sides", () => {
+  const series = Float64Array.from(
+    { length: 700 },
+    (_, t) => Math.sin(t / 4) + Math.cos(t / 40) + ((t * 7919) % 1009) / 1009,
+  );
+
+  test("a high-pass is the series less the low-pass of the same length, a band the difference of two low-passes", () => {
+    const high = filterSeries(series, lanczosFilter({ shortestSamples: null, longestSamples: 120 }));
+    const filter = lanczosFilter({ shortestSamples: 20, longestSamples: 120 });
+    const slow = filterSeries(series, { ...filter, slow: null, fast: filter.slow });
+    expectAllClose(
+      high,
+      series.map((value, t) => value - slow[t]),
+      { absolute: 1e-12, because: "rounding" },
+    );
+    const fast = filterSeries(series, { ...filter, slow: null });
+    expectAllClose(
+      filterSeries(series, filter),
+      fast.map((value, t) => value - slow[t]),
+      {
+        absolute: 1e-12,
+        because: "rounding",
+      },
+    );
+  });
+
+  test("a low-pass reaches twice its cut-off, the others once the longest", () => {
+    expect(lanczosFilter({ shortestSamples: 30, longestSamples: null }).halfWidth).toBe(60);
+    expect(lanczosFilter({ shortestSamples: null, longestSamples: 120 }).halfWidth).toBe(120);
+    expect(lanczosFilter({ shortestSamples: 30, longestSamples: 180 })).toEqual(lanczosBand(30, 180));
+    expect(lanczosFilter({ shortestSamples: 30, longestSamples: null })).toEqual(
+      lanczosBand(30, Number.POSITIVE_INFINITY),
+    );
+  });
+
+  test("half the amplitude is left near the cut-off, all of it far inside the pass band, none far outside", () => {
+    const near = { absolute: 0.03, because: "about one half at the cut-off with this half-width" };
+    const low = lanczosFilter({ shortestSamples: 30, longestSamples: null });
+    const high = lanczosFilter({ shortestSamples: null, longestSamples: 120 });
+    for (const [filter, period, inside, outside] of [
+      [low, 30, 3000, 8],
+      [high, 120, 12, 3000],
+    ] as const) {
+      expectClose(bandResponse(filter, 1 / period), 0.5, near);
+      expectClose(bandResponse(filter, 1 / inside), 1, { absolute: 0.005, because: "side lobes of the window" });
+      expectClose(bandResponse(filter, 1 / outside), 0, { absolute: 0.005, because: "side lobes of the window" });
+    }
+  });
+
+  test("open on both sides changes nothing, gaps included", () => {
+    const gappy = series.slice().fill(Number.NaN, 100, 140);
+    const filter = lanczosFilter({ shortestSamples: null, longestSamples: null });
+    expect([...filterSeries(gappy, filter)]).toEqual([...gappy]);
+    expect(bandResponse(filter, 0.1)).toBe(1);
+  });
+
+  test("a high-pass gives no value where there is none", () => {
+    const gappy = series.slice().fill(Number.NaN, 300, 303);
+    const out = filterSeries(gappy, lanczosFilter({ shortestSamples: null, longestSamples: 40 }));
+    expect([...out.subarray(298, 305)].map(Number.isNaN)).toEqual([false, false, true, true, true, false, false]);
   });
 });
