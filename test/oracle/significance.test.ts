@@ -8,7 +8,7 @@ import {
   studentTwoSided,
 } from "../../core/numeric/distributions";
 import { autocorrelation, effectiveSizeFromLags, meanAndDeviation } from "../../core/numeric/serial-correlation";
-import { redNoiseSpectrum, redNoiseThreshold } from "../../core/numeric/spectra/red-noise";
+import { redNoiseDensity, redNoiseSpectrum, redNoiseThreshold } from "../../core/numeric/spectra/red-noise";
 import { blockLength } from "../../core/numeric/statistics/block-bootstrap";
 import {
   correlationInterval,
@@ -26,6 +26,7 @@ import { falseDiscovery } from "../../core/numeric/statistics/false-discovery";
 import { randomStream } from "../../core/numeric/statistics/random";
 import { theilSenLine } from "../../core/numeric/statistics/theil-sen";
 import { eFoldingTime, integralTimeScale } from "../../core/numeric/statistics/time-scales";
+import { welchSpectrum } from "../../core/numeric/welch";
 import { expectAllClose, expectClose } from "../expect-close";
 import { referenceJson } from "../reference-json";
 
@@ -179,19 +180,21 @@ describe("correlation under serial correlation, against scipy", () => {
     expectClose(effectiveSizeOfBand(90, Number.POSITIVE_INFINITY, 900), 20, sums, "low-pass");
   });
 
+  // Thirty years of ten-day maps, 90 to 540 days; every pair of independent records is a trial.
+  const samples = 1096;
+  const filter = lanczosBand(9, 54);
+  const at = Int32Array.from({ length: samples }, (_, i) => i + filter.halfWidth);
+  const bandPassed = (record: number) => {
+    const random = randomStream(2899, record);
+    const white = Float64Array.from({ length: samples + 2 * filter.halfWidth }, () => random.normal());
+    return filterSeries(white, filter, at);
+  };
+
   test("band-passed white noise is rejected at 5 ± 1 %", () => {
-    // Thirty years of ten-day maps, 90 to 540 days; every pair of 100 independent records is a trial.
-    const [records, samples, lags] = [100, 1096, 120];
-    const filter = lanczosBand(9, 54);
-    const at = Int32Array.from({ length: samples }, (_, i) => i + filter.halfWidth);
-    const series = Array.from({ length: records }, (_, record) => {
-      const random = randomStream(2899, record);
-      const white = Float64Array.from({ length: samples + 2 * filter.halfWidth }, () => random.normal());
-      return filterSeries(white, filter, at);
-    });
-    const own = series.map((each) => autocorrelation(each, lags));
+    const series = Array.from({ length: 100 }, (_, record) => bandPassed(record));
+    const own = series.map((each) => autocorrelation(each, 120));
     let [rejected, trials, naive] = [0, 0, 0];
-    for (let i = 0; i < records; i++) {
+    for (let i = 0; i < series.length; i++) {
       for (let j = 0; j < i; j++) {
         const { correlation, count } = pearsonCorrelation(series[i], series[j]);
         const size = effectiveSizeFromLags(count, own[i], own[j]);
@@ -200,8 +203,28 @@ describe("correlation under serial correlation, against scipy", () => {
         trials++;
       }
     }
-    expectClose(rejected / trials, 0.05, { absolute: 0.01, because: "asked; 4950 trials have a deviation of 0.3 %" });
+    expectClose(rejected / trials, 0.05, { absolute: 0.01, because: "4950 trials have a deviation of 0.3 %" });
     expect(naive / trials).toBeGreaterThan(0.3);
+  });
+
+  test("with two fifths of each record missing, in runs, it still is", () => {
+    const series = Array.from({ length: 50 }, (_, record) => {
+      const random = randomStream(748, record);
+      const each = bandPassed(record);
+      for (let gap = 0; gap < 13; gap++) {
+        const from = random.below(samples);
+        each.fill(Number.NaN, from, from + 40);
+      }
+      return each;
+    });
+    let [rejected, trials] = [0, 0];
+    for (let i = 0; i < series.length; i++) {
+      for (let j = 0; j < i; j++) {
+        if (testedCorrelation(series[i], series[j], 0.95, 60).pValue < 0.05) rejected++;
+        trials++;
+      }
+    }
+    expectClose(rejected / trials, 0.05, { absolute: 0.015, because: "1225 trials have 0.6 %" });
   });
 });
 
@@ -215,6 +238,28 @@ describe("red noise", () => {
       expectClose(redNoiseThreshold(2, 0.01), ratio99, sums, "99 %");
     },
   );
+
+  test("the periodogram of red noise passes its threshold at one bin in twenty", () => {
+    const [records, count, r] = [150, 257, 0.5];
+    let [passed, tested] = [0, 0];
+    for (let record = 0; record < records; record++) {
+      const random = randomStream(1963, record);
+      let last = random.normal() / Math.sqrt(1 - r * r);
+      const series = Float64Array.from({ length: count }, () => {
+        last = r * last + random.normal();
+        return last;
+      });
+      const settings = { segment: count, overlap: 0, detrend: "constant", taper: { kind: "boxcar" } } as const;
+      const { frequency, density, degreesOfFreedom } = welchSpectrum(series, 7, settings);
+      const noise = redNoiseDensity(r, 1 / (1 - r * r), frequency, 7);
+      const factor = redNoiseThreshold(degreesOfFreedom);
+      for (let k = 2; k < density.length; k++) {
+        tested++;
+        if (density[k] > factor * noise[k]) passed++;
+      }
+    }
+    expectClose(passed / tested, 0.05, { absolute: 0.006, because: "19 050 bins have 0.16 %, leakage adds a little" });
+  });
 
   test("a search over m bins of white noise passes its threshold in one record of twenty", () => {
     // For two degrees of freedom the largest of m estimates stays below x with probability (1 - exp(-x))^m.

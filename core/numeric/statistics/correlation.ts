@@ -1,5 +1,6 @@
 import { normalQuantile, studentQuantile, studentTwoSided } from "../distributions";
-import { autocorrelation, effectiveSizeFromLags } from "../serial-correlation";
+import { autocorrelation } from "../serial-correlation";
+import { effectiveSizeOverValid } from "./effective-size";
 
 /**
  * Pearson's correlation over the samples valid in both series, within -1 … 1, and how many there are. NaN under three samples
@@ -76,8 +77,8 @@ export interface TestedCorrelation {
 
 /**
  * Correlation of two series on one even axis, tested with the effective size from the products of their own autocorrelations
- * up to `longestLag` (a quarter of the record where not given), times the share of samples valid in both. Right for band-passed
- * series, which AR(1) does not describe: independent white noise through a band is rejected as often as the risk says.
+ * up to `longestLag` (a quarter of the record where not given), over the samples valid in both. Right for band-passed series,
+ * which AR(1) does not describe: independent white noise through a band is rejected as often as the risk says.
  */
 export function testedCorrelation(
   first: Float64Array,
@@ -86,12 +87,11 @@ export function testedCorrelation(
   longestLag = Math.floor(first.length / 4),
 ): TestedCorrelation {
   const { correlation, count } = pearsonCorrelation(first, second);
-  const whole = effectiveSizeFromLags(
-    first.length,
+  const effectiveSize = effectiveSizeOverValid(
+    Uint8Array.from(first, (value, t) => (Number.isNaN(value + second[t]) ? 0 : 1)),
     autocorrelation(first, longestLag),
     autocorrelation(second, longestLag),
   );
-  const effectiveSize = (whole * count) / first.length;
   return {
     correlation,
     count,
