@@ -248,12 +248,7 @@ def means():
 
 if __name__ == "__main__":
     assert_known_cases()
-    write_or_check(
-        __file__,
-        {
-            "laplacianOverF": laplacian_over_f(),
-            "composedOverF": composed_over_f(),
-            "grids": {name: grid_cases(name) for name in GRIDS},
-            "means": means(),
-        },
-    )
+    values = {"laplacianOverF": laplacian_over_f(), "composedOverF": composed_over_f()}
+    values["grids"] = {name: grid_cases(name) for name in GRIDS}
+    values["means"] = means()
+    write_or_check(__file__, values)

@@ -5,6 +5,8 @@ import type { GridGeometry } from "../grid-geometry";
 /** The differences that were taken of one plane in one direction, cell by cell. */
 export interface TakenDifferences {
   readonly plane: Float64Array;
+  /** The derivative itself, per metre. */
+  readonly slopes: Float64Array;
   readonly plan: DifferencePlan;
   /** Points used at each cell, as `differentiateLine` reports them. */
   readonly widths: Int8Array;
@@ -25,9 +27,10 @@ export function takeDifferences(
 ): TakenDifferences {
   const widths = new Int8Array(plane.length);
   const derivative = direction === "east" ? eastwardDerivative : northwardDerivative;
-  derivative(plane, geometry, new Float64Array(plane.length), widths);
+  const slopes = derivative(plane, geometry, new Float64Array(plane.length), widths);
   return {
     plane,
+    slopes,
     plan: direction === "east" ? geometry.alongRow : geometry.alongColumn,
     widths,
     columns: geometry.columns,

@@ -1,5 +1,6 @@
 import type { GridAxes } from "../../model/axis";
 import { Fault } from "../../model/errors";
+import { correlatedForm } from "./correlation";
 import type { WeightSum } from "./weight-sum";
 
 /** What is known of the heights' error. */
@@ -15,12 +16,6 @@ export interface HeightError {
 
 /** Standard error of a weighted sum of heights, in the weights' unit times metres. */
 export type ErrorOfSum = (sum: WeightSum) => number;
-
-/**
- * Radius for distances between errors, whichever earth the study differences on: no correlation length is known to the
- * 0.3 % that the two differ by.
- */
-const distanceRadiusKm = 6371;
 
 /**
  * Prepares `sqrt(w' C w)` for weights w and the covariance C = sigma_i sigma_j exp(-d²/2L²) of height errors on a grid. d
@@ -41,25 +36,13 @@ export function errorOfSums(axes: GridAxes, error: HeightError): ErrorOfSum {
       return Math.sqrt(variance);
     };
   }
-  const places = unitVectors(axes);
-  const exponent = -(distanceRadiusKm ** 2) / (2 * correlationKm ** 2);
+  const form = correlatedForm(axes, correlationKm);
+  const amounts = new Float64Array(size);
   return ({ count, cells, weights }) => {
-    let variance = 0;
-    for (let k = 0; k < count; k++) {
-      const one = cells[k];
-      const scaled = weights[one] * sigma[one];
-      let withOthers = 0;
-      for (let l = 0; l < k; l++) {
-        const other = cells[l];
-        const x = places.x[one] - places.x[other];
-        const y = places.y[one] - places.y[other];
-        const z = places.z[one] - places.z[other];
-        withOthers += weights[other] * sigma[other] * Math.exp(exponent * (x * x + y * y + z * z));
-      }
-      variance += scaled * (scaled + 2 * withOthers);
-    }
+    const ascending = cells.subarray(0, count).sort();
+    for (let k = 0; k < count; k++) amounts[k] = weights[ascending[k]] * sigma[ascending[k]];
     // Weights that cancel within rounding can leave a variance just below 0.
-    return Math.sqrt(Math.max(variance, 0));
+    return Math.sqrt(Math.max(form(amounts, ascending, count), 0));
   };
 }
 
@@ -69,20 +52,6 @@ function sigmaPlane(sigma: number | Float64Array, size: number): Float64Array {
   const negative = plane.find((value) => value < 0);
   if (negative !== undefined) throw badError("standard errors of 0 m or more", `${negative} m`);
   return plane;
-}
-
-function unitVectors({ latitude, longitude }: GridAxes): Record<"x" | "y" | "z", Float64Array> {
-  const columns = longitude.values.length;
-  const size = latitude.values.length * columns;
-  const places = { x: new Float64Array(size), y: new Float64Array(size), z: new Float64Array(size) };
-  for (let cell = 0; cell < size; cell++) {
-    const phi = (latitude.values[Math.floor(cell / columns)] * Math.PI) / 180;
-    const lambda = (longitude.values[cell % columns] * Math.PI) / 180;
-    places.x[cell] = Math.cos(phi) * Math.cos(lambda);
-    places.y[cell] = Math.cos(phi) * Math.sin(lambda);
-    places.z[cell] = Math.sin(phi);
-  }
-  return places;
 }
 
 function badError(expected: string, got: string): Fault {

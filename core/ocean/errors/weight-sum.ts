@@ -1,5 +1,5 @@
 /**
- * A weighted sum over the cells of a plane, kept sparse: `cells[0 … count - 1]` are the cells with a weight and
+ * A weighted sum over the cells of a plane, kept sparse: `cells[0 … count - 1]` are the cells with a weight, in any order, and
  * `weights[cell]` is each one's. Reused from cell to cell: `clearWeights` costs only what was set.
  */
 export interface WeightSum {

@@ -6,7 +6,7 @@ import { heightOperators } from "../../../../core/ocean/errors/height-operators"
 import { errorOfTimeMean, errorOfZonalMean } from "../../../../core/ocean/errors/mean-error";
 import { addWeight, clearWeights, weightSum } from "../../../../core/ocean/errors/weight-sum";
 import { geostrophicVelocity } from "../../../../core/ocean/geostrophy";
-import { gridGeometry } from "../../../../core/ocean/grid-geometry";
+import { type GridGeometry, gridGeometry } from "../../../../core/ocean/grid-geometry";
 import { relativeVorticity } from "../../../../core/ocean/vorticity";
 import { expectAllClose, expectClose } from "../../../expect-close";
 import { evenAxes, planeFrom, sphere } from "../grids";
@@ -17,27 +17,51 @@ const bumpy = planeFrom(axes, (x, y) => 0.3 * Math.sin(x * 2.1) * Math.cos(y * 1
 bumpy.fill(Number.NaN, 0, 3);
 for (const cell of [33, 34, 90, 121, 150]) bumpy[cell] = Number.NaN;
 
+/** Applies the weights to the heights themselves: the values must come out, NaN in the same places. */
+function expectReproduced(height: Float64Array, geometry: GridGeometry): void {
+  const velocity = geostrophicVelocity(height, geometry);
+  const values = { ...velocity, vorticity: relativeVorticity(velocity, geometry) };
+  const operators = heightOperators(height, geometry);
+  const sum = weightSum(height.length);
+  for (const name of ["u", "v", "vorticity"] as const) {
+    const applied = values[name].map((_, cell) => {
+      const hasValue = operators[name](sum, cell);
+      let value = 0;
+      for (let k = 0; k < sum.count; k++) value += sum.weights[sum.cells[k]] * height[sum.cells[k]];
+      clearWeights(sum);
+      return hasValue ? value : Number.NaN;
+    });
+    expectAllClose(applied, values[name], { relative: 1e-11, because: "the same sums in another order" }, name);
+  }
+}
+
 describe("the weights of u, v and vorticity", () => {
   test.each(stencilPoints)(
     "reproduce each value as a weighted sum of heights, gaps included (%i points)",
     (stencil) => {
       const geometry = gridGeometry(axes, { ...sphere, stencil }, "test");
-      const velocity = geostrophicVelocity(bumpy, geometry);
-      const values = { ...velocity, vorticity: relativeVorticity(velocity, geometry) };
-      const operators = heightOperators(bumpy, geometry);
-      for (const name of ["u", "v", "vorticity"] as const) {
-        const sum = weightSum(size);
-        const applied = Float64Array.from({ length: size }, (_, cell) => {
-          const hasValue = operators[name](sum, cell);
-          let value = 0;
-          for (let k = 0; k < sum.count; k++) value += sum.weights[sum.cells[k]] * bumpy[sum.cells[k]];
-          clearWeights(sum);
-          return hasValue ? value : Number.NaN;
-        });
-        expectAllClose(applied, values[name], { relative: 1e-12, because: "the same sums in another order" }, name);
-      }
+      expectReproduced(bumpy, geometry);
     },
   );
+});
+
+describe("the weights in a belt blended across the equator", () => {
+  const belt = evenAxes({ west: 200, south: -8, step: 0.5, columns: 12, rows: 33 });
+  const height = planeFrom(belt, (x, y) => 0.1 * Math.cos(0.4 * y) * Math.sin(x) + 0.01 * y * y);
+  for (const cell of [40, 100, 101, 197, 260]) height[cell] = Number.NaN;
+  const geometry = gridGeometry(belt, { ...sphere, stencil: 5, equator: "blend" }, "test");
+
+  test("reproduce u, v and vorticity, gaps included", () => {
+    const velocity = geostrophicVelocity(height, geometry);
+    expect(velocity.u[16 * 12 + 11]).not.toBeNaN();
+    expectReproduced(height, geometry);
+  });
+
+  test("leave u at the equator a finite error", () => {
+    const { u } = errorPlanes(height, belt, geometry, { sigmaMetres: 0.01, correlationKm: 0 });
+    expect(u[16 * 12 + 11]).toBeGreaterThan(0);
+    expect(u[16 * 12 + 11]).toBeLessThan(0.5);
+  });
 });
 
 describe("white height error", () => {
@@ -93,6 +117,23 @@ describe("correlated height error", () => {
     expectClose(errors.u[6 * 14 + 7], exact, { relative: 4e-3, because });
     expectClose(errors.v[6 * 14 + 7], exact, { relative: 4e-3, because });
   });
+});
+
+test.each([3, 70])("two heights %i columns apart are correlated by their distance through the earth", (apart) => {
+  const wide = evenAxes({ west: 200, south: 27, step: 0.5, columns: 90, rows: 4 });
+  const sum = weightSum(360);
+  // Added in falling order of cells: the order must not matter.
+  addWeight(sum, 2 * 90 + 5 + apart, 1);
+  addWeight(sum, 5, 1);
+  const place = (row: number, column: number) => {
+    const [phi, lambda] = [(27 + row / 2) * (Math.PI / 180), (column / 2) * (Math.PI / 180)];
+    return [Math.cos(phi) * Math.cos(lambda), Math.cos(phi) * Math.sin(lambda), Math.sin(phi)];
+  };
+  const [one, other] = [place(2, 5 + apart), place(0, 5)];
+  const distance = 6371 * Math.hypot(...one.map((value, axis) => value - other[axis]));
+  const correlation = Math.exp(-(distance ** 2) / (2 * 2000 ** 2));
+  const error = errorOfSums(wide, { sigmaMetres: 0.01, correlationKm: 2000 })(sum);
+  expectClose(error, 0.01 * Math.sqrt(2 + 2 * correlation), { relative: 1e-12, because: "closed form" });
 });
 
 describe("the error of a zonal mean", () => {
