@@ -151,6 +151,23 @@ describe("loess over a plane", () => {
     expect(worst).toBeLessThan(0.01);
   });
 
+  test("a cell with unknown lattice nodes beside it is fitted directly", () => {
+    const geometry = flat(41, 41, 25 * km);
+    const plane = new Float64Array(41 * 41).fill(Number.NaN);
+    const lonely = 20 * 41 + 11;
+    plane[lonely] = 0.4;
+    for (let row = 15; row < 26; row++)
+      for (let column = 24; column < 28; column++) plane[row * 41 + column] = row * column * 1e-3;
+    // Sixteen cells a half-span: the westernmost of the lonely cell's four nodes, three cells off, sees none of the block.
+    const { values, stride } = loessSurface(plane, geometry, { eastKilometres: 400, northKilometres: 400 });
+    expect(stride).toEqual({ rows: 2, columns: 2 });
+    const spans = { eastKilometres: 400, northKilometres: 400 };
+    expect(surfaceFit(plane, geometry, spans, 20)(8)).toBeNaN();
+    const direct = surfaceAt(plane, geometry, 400, 20, 11);
+    expect(direct).not.toBeNaN();
+    expect(values[lonely]).toBe(direct);
+  });
+
   test("values are given only where there are data, none where too few cells weigh", () => {
     const geometry = flat(20, 20, 25 * km);
     const lone = new Float64Array(400).fill(Number.NaN);

@@ -1,6 +1,6 @@
 import fc from "fast-check";
 import { describe, expect, test } from "vitest";
-import { bandResponse, filterSeries, lanczosFilter } from "../../../../core/numeric/band-filter";
+import { bandResponse, filterSeries, lanczosFilter, weightShare } from "../../../../core/numeric/band-filter";
 import { meridionalRadiusMetres } from "../../../../core/numeric/ellipsoid";
 import { filterMeridional } from "../../../../core/numeric/filters/meridional";
 import { FilterRefusal } from "../../../../core/numeric/filters/refusal";
@@ -27,6 +27,11 @@ function planeOf({ rows, columns }: PlaneGeometry, value: (row: number, column: 
   return Float64Array.from({ length: rows * columns }, (_, i) => value(Math.floor(i / columns), i % columns));
 }
 
+function known(series: Float64Array): Uint8Array {
+  return Uint8Array.from(series, (value) => (Number.isNaN(value) ? 0 : 1));
+}
+
+const sameSums = { absolute: 1e-12, because: "the same sums; the outermost weight is a rounded zero" };
 const band = { shortestKilometres: 200, longestKilometres: 500 };
 const bands = [band, { ...band, longestKilometres: null }, { ...band, shortestKilometres: null }];
 
@@ -54,14 +59,16 @@ describe("zonal filter", () => {
     const plane = planeOf(geometry, (row, column) => ((column * 7919 + row * 101) % 1009) / 1009);
     plane.fill(Number.NaN, 40, 47).fill(Number.NaN, 160, 163);
     for (const each of bands) {
-      const { values } = filterZonal(plane, geometry, each);
+      const { values, share } = filterZonal(plane, geometry, each);
       for (let row = 0; row < 3; row++) {
         const cells = (km: number | null) => km && (km * 1000) / geometry.eastSpacingMetres[row];
         const filter = lanczosFilter({
           shortestSamples: cells(each.shortestKilometres),
           longestSamples: cells(each.longestKilometres),
         });
-        const wanted = filterSeries(plane.slice(row * 120, (row + 1) * 120), filter);
+        const line = plane.slice(row * 120, (row + 1) * 120);
+        const wanted = filterSeries(line, filter);
+        expectAllClose(share.subarray(row * 120, (row + 1) * 120), weightShare(filter, known(line)), sameSums);
         expectAllClose(values.subarray(row * 120, (row + 1) * 120), wanted, {
           absolute: 1e-12,
           because: "the same sums; the outermost weight is a rounded zero",
@@ -130,11 +137,13 @@ describe("meridional filter", () => {
         shortestSamples: cells(each.shortestKilometres),
         longestSamples: cells(each.longestKilometres),
       });
-      const { values } = filterMeridional(plane, even, each);
+      const { values, share } = filterMeridional(plane, even, each);
       for (let column = 0; column < 3; column++) {
         const series = Float64Array.from({ length: 90 }, (_, row) => plane[row * 3 + column]);
         const got = Float64Array.from({ length: 90 }, (_, row) => values[row * 3 + column]);
-        expectAllClose(got, filterSeries(series, filter), { absolute: 1e-12, because: "the same sums" });
+        expectAllClose(got, filterSeries(series, filter), sameSums);
+        const shares = Float64Array.from({ length: 90 }, (_, row) => share[row * 3 + column]);
+        expectAllClose(shares, weightShare(filter, known(series)), sameSums);
       }
     }
   });
