@@ -15,7 +15,7 @@ export interface SmoothSurface {
   readonly interpolationError: number;
 }
 
-/** Lattice nodes a half-span: a wave of one half-span then has eight nodes and loses 0.2 % between them. */
+/** Lattice nodes a half-span: a wave of one half-span then has eight nodes and loses 0.85 % midway between them. */
 const nodesInSpan = 8;
 /** At most this many cells are fitted again to measure the interpolation. */
 const mostChecks = 64;
