@@ -1,7 +1,7 @@
 import { planeOf } from "../model/cube";
 import type { BackgroundBasis } from "../numeric/background";
-import { type BandFilter, leastWeightShare } from "../numeric/band-filter";
 import type { HeightRecord } from "./record";
+import type { TimeFilter } from "./time-filter";
 
 export interface Background {
   readonly basis: BackgroundBasis;
@@ -10,24 +10,22 @@ export interface Background {
 }
 
 /**
- * Height in the band on one date, in metres: one weighted sum of height planes less the background, cell by cell. Equals
- * filtering every cell's own series (filterSeries after removeBackground) to rounding, gaps included: each low-pass is a
- * weighted mean over the cell's valid dates. NaN where a cell has too little data. `filter` null: only the background is
- * taken off.
+ * Height in the band on one date, in metres: one weighted sum of height planes less the background. Equals filtering every
+ * cell's own series after its background is off, gaps included: cells that miss dates which others have are filtered by
+ * themselves. NaN where a cell has too little data. `filter` null: only the background is taken off.
  */
 export function bandHeightPlane(
   record: HeightRecord,
   date: number,
-  filter: BandFilter | null,
+  filter: TimeFilter | null,
   background: Background,
 ): Float64Array {
   if (!filter) return anomalyPlane(record, date, background);
-  const fast = filter.fast
-    ? lowPassPlane(record, date, filter.fast, filter.halfWidth, background)
-    : anomalyPlane(record, date, background);
-  if (!filter.slow) return fast;
-  const slow = lowPassPlane(record, date, filter.slow, filter.halfWidth, background);
-  return fast.map((value, cell) => value - slow[cell]);
+  const plane = weightedSum(record, filter.row(record.hasData, date), background);
+  record.irregular.forEach((cell) => {
+    plane[cell] = filter.apply(anomalySeries(record, cell, background), Int32Array.of(date))[0];
+  });
+  return plane;
 }
 
 /** One date's plane less its background. */
@@ -40,74 +38,42 @@ export function anomalyPlane({ cube }: HeightRecord, date: number, { basis, coef
   return plane;
 }
 
-function lowPassPlane(
-  record: HeightRecord,
-  date: number,
-  weights: Float64Array,
-  halfWidth: number,
+/** Sum of planes with the row's weights, less the same sum of the background; NaN for land, and everywhere for no row. */
+function weightedSum(
+  { cube, ocean }: HeightRecord,
+  row: Float64Array | null,
   { basis, coefficients }: Background,
 ): Float64Array {
-  const { cube, hasData, complete } = record;
-  const { values } = cube;
   const cells = cube.rows * cube.columns;
-  const terms = basis.names.length;
+  if (!row) return new Float64Array(cells).fill(Number.NaN);
   const sum = new Float64Array(cells);
-  const termWeight = new Float64Array(terms);
-  const missed = new MissedWeight(record, basis);
-  let total = 0;
-  const from = Math.max(0, date - halfWidth);
-  const to = Math.min(cube.dates - 1, date + halfWidth);
-  for (let s = from; s <= to; s++) {
-    if (!hasData[s]) continue;
-    const weight = weights[s - date + halfWidth];
-    total += weight;
-    for (let term = 0; term < terms; term++) termWeight[term] += weight * basis.values[term * basis.samples + s];
-    const start = s * cells;
-    if (complete[s]) {
-      for (let cell = 0; cell < cells; cell++) sum[cell] += weight * values[start + cell];
-    } else {
-      for (let cell = 0; cell < cells; cell++) {
-        const value = values[start + cell];
-        if (Number.isNaN(value)) missed.add(cell, s, weight);
-        else sum[cell] += weight * value;
-      }
+  const termWeight = new Float64Array(basis.names.length);
+  for (let date = 0; date < cube.dates; date++) {
+    const weight = row[date];
+    if (weight === 0) continue;
+    for (let term = 0; term < termWeight.length; term++) {
+      termWeight[term] += weight * basis.values[term * basis.samples + date];
     }
+    const start = date * cells;
+    for (let cell = 0; cell < cells; cell++) sum[cell] += weight * cube.values[start + cell];
   }
   for (let cell = 0; cell < cells; cell++) {
-    const gone = missed.at(cell);
-    const share = total - (gone ? gone[terms] : 0);
-    let expected = 0;
-    for (let term = 0; term < terms; term++) {
-      expected += (termWeight[term] - (gone ? gone[term] : 0)) * coefficients[term * cells + cell];
+    for (let term = 0; term < termWeight.length; term++) {
+      sum[cell] -= termWeight[term] * coefficients[term * cells + cell];
     }
-    const known = record.ocean[cell] && share >= leastWeightShare;
-    sum[cell] = known ? (sum[cell] - expected) / share : Number.NaN;
+    if (!ocean[cell]) sum[cell] = Number.NaN;
   }
   return sum;
 }
 
-/** Weights, and basis sums, that single cells miss on dates where others are there. */
-class MissedWeight {
-  readonly #cells = new Map<number, Float64Array>();
-
-  constructor(
-    private readonly record: HeightRecord,
-    private readonly basis: BackgroundBasis,
-  ) {}
-
-  add(cell: number, date: number, weight: number): void {
-    if (!this.record.ocean[cell]) return;
-    const terms = this.basis.names.length;
-    let own = this.#cells.get(cell);
-    if (!own) {
-      own = new Float64Array(terms + 1);
-      this.#cells.set(cell, own);
+/** One cell's series less its background. */
+function anomalySeries({ cube }: HeightRecord, cell: number, { basis, coefficients }: Background): Float64Array {
+  const cells = cube.rows * cube.columns;
+  return Float64Array.from({ length: cube.dates }, (_, date) => {
+    let value = cube.values[date * cells + cell];
+    for (let term = 0; term < basis.names.length; term++) {
+      value -= coefficients[term * cells + cell] * basis.values[term * basis.samples + date];
     }
-    own[terms] += weight;
-    for (let term = 0; term < terms; term++) own[term] += weight * this.basis.values[term * this.basis.samples + date];
-  }
-
-  at(cell: number): Float64Array | undefined {
-    return this.#cells.get(cell);
-  }
+    return value;
+  });
 }

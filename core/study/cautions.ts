@@ -16,13 +16,15 @@ const rules: Readonly<Record<string, Rule>> = {
   standing: () =>
     "Geostrophic part only: no wind drift, tides, inertial or wave-driven motion. Not for navigation or operations at sea; follow local rules and licensed practice.",
   resolution: ({ band }) =>
-    band.filter !== "none" && band.shortestDays < resolvedDays
-      ? `The band starts at ${band.shortestDays} days; mapped heights hold little true signal below about ${resolvedDays} days and 150 to 200 km.`
+    band.filter !== "none" && (band.shortestDays ?? 0) < resolvedDays
+      ? `The band starts at ${band.shortestDays ?? 0} days; mapped heights hold little true signal below about ${resolvedDays} days and 150 to 200 km.`
       : null,
   shortRecord: ({ band }, { time, cube }) => {
     const days = cube.dates * time.step;
-    return band.filter !== "none" && days < 10 * band.longestDays
-      ? `The record of ${Math.round(days)} days holds ${(days / band.longestDays).toFixed(1)} of the longest period kept (${band.longestDays} days); ten or more are wanted for firm statistics.`
+    const { longestDays } = band;
+    if (band.filter === "none" || longestDays === null) return null;
+    return days < 10 * longestDays
+      ? `The record of ${Math.round(days)} days holds ${(days / longestDays).toFixed(1)} of the longest period kept (${longestDays} days); ten or more are wanted for firm statistics.`
       : null;
   },
   annualFit: ({ background }, { time, cube }) => {

@@ -1,5 +1,5 @@
 import { type BackgroundBasis, removeBackground } from "../numeric/background";
-import { type BandFilter, filterSeries } from "../numeric/band-filter";
+import type { TimeFilter } from "./time-filter";
 
 /**
  * Band-passed latitude–time matrix at the dates asked for, from zonal means `series[row * dates + t]`: background off, then
@@ -10,7 +10,7 @@ import { type BandFilter, filterSeries } from "../numeric/band-filter";
 export function bandLatitudeTime(
   series: Float64Array,
   rows: number,
-  filter: BandFilter | null,
+  filter: TimeFilter | null,
   basis: BackgroundBasis,
   hasData: Uint8Array,
   at: Int32Array,
@@ -19,7 +19,7 @@ export function bandLatitudeTime(
   const out = new Float64Array(rows * at.length);
   for (let row = 0; row < rows; row++) {
     const anomaly = removeBackground(series.subarray(row * dates, (row + 1) * dates), basis);
-    const filtered = filter ? filterSeries(anomaly, filter, at) : Float64Array.from(at, (t) => anomaly[t]);
+    const filtered = filter ? filter.apply(anomaly, at) : Float64Array.from(at, (t) => anomaly[t]);
     for (let i = 0; i < at.length; i++) out[row * at.length + i] = hasData[at[i]] ? filtered[i] : Number.NaN;
   }
   return out;

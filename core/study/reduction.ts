@@ -1,7 +1,4 @@
 import { rowMean } from "../numeric/row-mean";
-import type { GridGeometry } from "../ocean/grid-geometry";
-import type { PlaneLookup } from "../ocean/quantities/define";
-import { planesFrom } from "../ocean/quantities/evaluate";
 import type { HeightRecord } from "./record";
 
 /** Least share of a row's ocean cells that must be valid for a zonal mean. Common practice, no source. */
@@ -26,37 +23,30 @@ export function columnWeights(record: HeightRecord): Float64Array | null {
   );
 }
 
-/** Where a record's dates are reduced to: shared by the workers, each writes its own dates. */
+/** Where a record's dates are reduced to for one quantity: shared by the workers, each writes its own dates. */
 export interface ReductionTarget {
-  readonly quantities: readonly string[];
-  /** `zonal[(q * rows + row) * dates + t]`: zonal means, series contiguous in time. */
+  readonly quantity: string;
+  /** `zonal[row * dates + t]`: zonal means, series contiguous in time. */
   readonly zonal: Float64Array;
-  /** Cells kept whole for spectra and colour limits. */
+  /** Cells kept whole for spectra. */
   readonly sampleCells: Int32Array;
-  /** `samples[(q * cells + i) * dates + t]`. */
+  /** `samples[cell * dates + t]`. */
   readonly samples: Float32Array;
 }
 
-/** Reduces one date: zonal means and sampled cells of every quantity named. */
-export function reduceDate(
-  heights: Float64Array,
+/** Reduces one date's plane: zonal means and sampled cells. */
+export function reducePlane(
+  plane: Float64Array,
   date: number,
   record: HeightRecord,
-  geometry: GridGeometry,
   weights: Float64Array | null,
-  target: ReductionTarget,
+  { zonal, sampleCells, samples }: ReductionTarget,
 ): void {
-  const { dates, rows } = record.cube;
-  const planes: PlaneLookup = planesFrom(heights, geometry);
-  target.quantities.forEach((id, q) => {
-    const plane = planes(id);
-    const means = zonalMeans(plane, record, weights);
-    for (let row = 0; row < rows; row++) target.zonal[(q * rows + row) * dates + date] = means[row];
-    const { sampleCells, samples } = target;
-    for (let i = 0; i < sampleCells.length; i++) {
-      samples[(q * sampleCells.length + i) * dates + date] = plane[sampleCells[i]];
-    }
+  const { dates } = record.cube;
+  zonalMeans(plane, record, weights).forEach((mean, row) => {
+    zonal[row * dates + date] = mean;
   });
+  for (let i = 0; i < sampleCells.length; i++) samples[i * dates + date] = plane[sampleCells[i]];
 }
 
 /** Every `stride`-th ocean cell such that about `most` are kept, evenly over the region. */

@@ -25,8 +25,12 @@ export const geostrophySettings = z.strictObject({
   radius: z.number().min(6.3e6).max(6.4e6).default(6371000),
   gravity: z.union([z.literal("latitude"), z.number().min(9.7).max(9.9)]).default("latitude"),
   omega: z.number().min(7.2e-5).max(7.4e-5).default(7.292115e-5),
-  equator: z.enum(["blank"]).default("blank"),
+  equator: z.enum(["blank", "blend"]).default("blank"),
   equatorDegrees: z.number().min(0).max(30).default(5),
+  /** Blend only: e-folding latitude of the beta-plane solution's weight. */
+  blendScaleDegrees: z.number().min(0.5).max(10).default(2.2),
+  /** Blend only: the fit of the height's slope reaches this far on either side. */
+  blendWidthDegrees: z.number().min(2).max(15).default(5),
 });
 
 export const backgroundSettings = z.strictObject({
@@ -37,9 +41,49 @@ export const backgroundSettings = z.strictObject({
 });
 
 export const bandSettings = z.strictObject({
-  shortestDays: z.number().positive().default(90),
-  longestDays: z.number().positive().default(540),
-  filter: z.enum(["lanczos", "none"]).default("lanczos"),
+  /** null: nothing is taken off the short periods. */
+  shortestDays: z.number().positive().nullable().default(90),
+  /** null: nothing is taken off the long periods. */
+  longestDays: z.number().positive().nullable().default(540),
+  filter: z.enum(["lanczos", "butterworth", "running-mean", "none"]).default("lanczos"),
+  /** Butterworth only. */
+  order: z.number().int().min(1).max(8).default(4),
+  /** Butterworth only: what the named periods are in the result. */
+  cut: z.enum(["half-amplitude", "half-power"]).default("half-amplitude"),
+  /** Gaps up to this long are bridged; the filter does not reach across longer ones. */
+  bridgeDays: z.number().min(0).default(20),
+});
+
+/** Two wavelengths in kilometres; null leaves that side open. */
+const wavelengths = z
+  .strictObject({
+    shortestKm: z.number().positive().nullable().default(null),
+    longestKm: z.number().positive().nullable().default(null),
+  })
+  .nullable()
+  .default(null);
+
+export const spaceSettings = z.strictObject({
+  /** Band-pass along meridians. */
+  meridional: wavelengths,
+  /** Band-pass along parallels. */
+  zonal: wavelengths,
+  removeZonalMean: z.boolean().default(false),
+  /** Half-spans of a large-scale loess surface that is taken off; null takes nothing off. */
+  removeSurface: z
+    .strictObject({ zonalKm: z.number().min(50), meridionalKm: z.number().min(50) })
+    .nullable()
+    .default(null),
+});
+
+/** How far a height is off: a standard error in metres, or "file" for the file's own error variable. */
+export const errorSettings = z.strictObject({
+  heightMetres: z
+    .union([z.literal("file"), z.number().positive().max(10)])
+    .nullable()
+    .default(null),
+  /** Distance over which height errors are alike; 0 for independent cells. */
+  correlationKm: z.number().min(0).max(2000).default(0),
 });
 
 export const outputSettings = z.strictObject({
@@ -61,7 +105,9 @@ export const studySchema = z.strictObject({
   period: period.optional(),
   geostrophy: geostrophySettings.prefault({}),
   background: backgroundSettings.prefault({}),
+  space: spaceSettings.prefault({}),
   band: bandSettings.prefault({}),
+  errors: errorSettings.prefault({}),
   jets: z.strictObject({}).prefault({}),
   eddyTest: z.strictObject({}).prefault({}),
   scales: z.strictObject({}).prefault({}),
@@ -76,4 +122,6 @@ export type Region = z.output<typeof region>;
 export type Period = z.output<typeof period>;
 export type GeostrophySettings = z.output<typeof geostrophySettings>;
 export type BackgroundSettings = z.output<typeof backgroundSettings>;
+export type SpaceSettings = z.output<typeof spaceSettings>;
+export type ErrorSettings = z.output<typeof errorSettings>;
 export type BandSettings = z.output<typeof bandSettings>;

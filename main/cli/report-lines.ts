@@ -17,7 +17,7 @@ function gridLines(report: GridFileReport): string[] {
     `height     ${plain(height.name)} [${plain(height.fileUnits)}], found by ${height.foundBy}, above ${reference(height.reference)}, stored as ${height.storedAs}`,
     `latitude   ${extent(latitude)}`,
     `longitude  ${extent(longitude)}${longitude.periodic ? ", round the globe" : ""}`,
-    `time       ${days.length} dates, ${formatDay(time.calendar, days[0])} to ${formatDay(time.calendar, days[last])}${last > 0 ? `, every ${tidy(time.step)} days` : ""} (${time.calendar} calendar)`,
+    `time       ${days.length} ${days.length === 1 ? "date" : "dates"}, ${formatDay(time.calendar, days[0])} to ${formatDay(time.calendar, days[last])}${last > 0 ? `, every ${tidy(time.step)} days` : ""} (${time.calendar} calendar)`,
     `missing on the first date: ${masked.fill} by fill value, ${masked.validRange} by valid range, ${masked.notFinite} not finite`,
   ];
 }

@@ -40,7 +40,6 @@ export function createEngine(options: { readonly workers?: number } = {}): Engin
     load: ({ open, grid }, call) =>
       withJob(call, async (job) => {
         const { record, coverage, bytes, index } = await workspace().record(open, grid, job);
-        await workspace().reduction(open, grid, job);
         return {
           latitude: record.axes.latitude,
           longitude: record.axes.longitude,

@@ -1,8 +1,7 @@
 import type { FieldChoice, LatitudesResult, OpenStudy } from "../../core/contract/engine";
 import type { BandResponse, Plane } from "../../core/model/results";
-import { type BandFilter, trustedWeightShare, weightShare } from "../../core/numeric/band-filter";
 import { quantityById } from "../../core/ocean/quantities/evaluate";
-import { bandFilter, responseAt } from "../../core/study/band";
+import { responseAt, timeFilter } from "../../core/study/band";
 import type { Background } from "../../core/study/band-plane";
 import { colourLimits } from "../../core/study/colour-limits";
 import { thinnedDates } from "../../core/study/latitude-time";
@@ -10,11 +9,12 @@ import { meanProfile } from "../../core/study/profile";
 import type { HeightRecord } from "../../core/study/record";
 import type { ReductionTarget } from "../../core/study/reduction";
 import type { Study } from "../../core/study/schema";
+import type { TimeFilter } from "../../core/study/time-filter";
 import type { Job } from "./job";
 import type { WorkerPool } from "./pool";
-import { zonalSeries } from "./prepared";
+import { noBackground } from "./prepared";
 import { dateIndexFault } from "./request-faults";
-import type { FieldArguments } from "./tasks/field";
+import { type FieldArguments, fieldSettings } from "./tasks/field";
 import type { Workspace } from "./workspace";
 
 export interface LatitudesRequest {
@@ -31,27 +31,31 @@ export interface FieldStages {
   readonly record: HeightRecord;
   readonly reduction: ReductionTarget;
   readonly background: Background;
-  readonly filter: BandFilter | null;
+  readonly filter: TimeFilter | null;
 }
-
-const noBackground: Background = {
-  basis: { names: [], samples: 0, values: new Float64Array(0) },
-  coefficients: new Float64Array(0),
-};
 
 /** Stages of a study's record, from the workspace. The band is designed, and may be refused, only where it is used. */
 export async function fieldStages(
   workspace: Workspace,
   open: OpenStudy,
   grid: string,
-  inBand: boolean,
+  { quantity, inBand }: FieldChoice,
   job: Job,
 ): Promise<FieldStages> {
   const { record } = await workspace.record(open, grid, job);
-  const filter = inBand ? bandFilter(open.study.band, record.time) : null;
+  const filter = inBand ? timeFilter(open.study.band, record.time) : null;
   const background = inBand ? await workspace.background(open, grid, job) : noBackground;
-  const reduction = await workspace.reduction(open, grid, job);
+  const reduction = await workspace.reduction(open, grid, quantity, job);
   return { record, reduction, background, filter };
+}
+
+/** One quantity of a field. */
+export type QuantityArguments = FieldArguments & { readonly quantity: string };
+
+/** What the workers need to make fields of these stages. */
+export function fieldArguments(stages: FieldStages, study: Study, inBand: boolean): FieldArguments {
+  const { record, background } = stages;
+  return { record, ...fieldSettings(study), background, inBand };
 }
 
 /** What the Latitudes view draws for one field, date and band. */
@@ -63,18 +67,11 @@ export async function latitudesResult(
   const { open, grid, choice, dateIndex } = request;
   const { inBand } = choice;
   quantityById(choice.quantity);
-  const stages = await fieldStages(workspace, open, grid, inBand, job);
-  const { record, filter, background } = stages;
+  const stages = await fieldStages(workspace, open, grid, choice, job);
+  const { record, filter } = stages;
   const { dates, rows, columns } = record.cube;
   if (!(Number.isInteger(dateIndex) && dateIndex >= 0 && dateIndex < dates)) throw dateIndexFault(dateIndex, dates);
-  const field: FieldArguments = {
-    record,
-    geostrophy: open.study.geostrophy,
-    background,
-    quantity: choice.quantity,
-    inBand,
-    filter,
-  };
+  const field: QuantityArguments = { ...fieldArguments(stages, open.study, inBand), quantity: choice.quantity };
   const columnDates = thinnedDates(dates, request.columns);
   const [{ map, onDate }, limits, series] = await Promise.all([
     workspace.pool.run("map", { ...field, date: dateIndex }, job),
@@ -89,7 +86,7 @@ export async function latitudesResult(
     profile: meanProfile(series, rows, columnDates.length, inBand),
     latitudeTime: plane(series, rows, columnDates.length),
     columnDates,
-    filterEnd: filter ? filterEnds(filter, record.hasData) : new Uint8Array(dates),
+    filterEnd: filter ? filter.ends(record.hasData) : new Uint8Array(dates),
     limits,
     pictureLimits: colourLimits([series], quantityById(choice.quantity).signed),
     response: responseOf(open.study, filter, record),
@@ -100,21 +97,26 @@ export async function latitudesResult(
 export async function pictureSeries(
   pool: WorkerPool,
   stages: FieldStages,
-  field: FieldArguments,
+  field: QuantityArguments,
   at: Int32Array,
   job: Job,
 ): Promise<Float64Array> {
-  const { record, reduction, background, filter } = stages;
+  const { record, reduction, background } = stages;
   const { rows, dates } = record.cube;
-  const zonal = zonalSeries(reduction, field.quantity, rows, dates);
+  const { zonal } = reduction;
   if (!field.inBand) {
     return Float64Array.from({ length: rows * at.length }, (_, i) => {
       return zonal[Math.floor(i / at.length) * dates + at[i % at.length]];
     });
   }
   if (quantityById(field.quantity).linear) {
-    const { hasData } = record;
-    return pool.run("picture", { zonal, rows, filter, basis: background.basis, hasData, columns: at }, job);
+    const { time, hasData } = record;
+    const { band } = field;
+    return pool.run(
+      "picture",
+      { zonal, record: { time, hasData }, rows, band, basis: background.basis, columns: at },
+      job,
+    );
   }
   const parts = await job.step("Filtering map by map", at.length, () =>
     pool.share("zonalBand", at.length, ([from, to]) => ({ ...field, dates: at.subarray(from, to) }), job),
@@ -125,12 +127,7 @@ export async function pictureSeries(
   });
 }
 
-/** 1 on dates whose filtered value rests on less than 90 % of the filter's weight: the record's ends and beside gaps. */
-export function filterEnds(filter: BandFilter, hasData: Uint8Array): Uint8Array {
-  return Uint8Array.from(weightShare(filter, hasData), (share) => (share < trustedWeightShare ? 1 : 0));
-}
-
-function responseOf(study: Study, filter: BandFilter | null, { time, cube }: HeightRecord): BandResponse {
+function responseOf(study: Study, filter: TimeFilter | null, { time, cube }: HeightRecord): BandResponse {
   const stepDays = time.step;
   const points = 400;
   const lowest = 1 / (cube.dates * stepDays);
@@ -143,14 +140,14 @@ function responseOf(study: Study, filter: BandFilter | null, { time, cube }: Hei
   return {
     frequency,
     amplitude: responseAt(designed, frequency, stepDays),
-    halfWidthSteps: designed?.halfWidth ?? 0,
+    halfWidthSteps: designed?.reach ?? 0,
     daysLostEachEnd: designed ? daysLost(designed, cube.dates, stepDays) : 0,
   };
 }
 
 /** Days at each end of a gap-free record of this length whose filtered values are marked. */
-function daysLost(filter: BandFilter, dates: number, stepDays: number): number {
-  const marked = filterEnds(filter, new Uint8Array(dates).fill(1));
+export function daysLost(filter: TimeFilter, dates: number, stepDays: number): number {
+  const marked = filter.ends(new Uint8Array(dates).fill(1));
   const firstTrusted = marked.indexOf(0);
   return (firstTrusted < 0 ? dates : firstTrusted) * stepDays;
 }

@@ -55,7 +55,7 @@ export async function loadRecord(
     return addedCounts(await Promise.all(reads));
   });
   const cube = { dates: dates[1] - dates[0], rows, columns, values };
-  const { ocean, hasData, complete, coverage } = surveyValidity(cube);
+  const { ocean, hasData, complete, irregular, mean, coverage } = surveyValidity(cube);
   if (!hasData.includes(1)) throw nothingValid(where);
   const record = {
     cube,
@@ -64,6 +64,8 @@ export async function loadRecord(
     ocean: sharedUint8(ocean),
     hasData: sharedUint8(hasData),
     complete: sharedUint8(complete),
+    irregular,
+    mean,
   };
   return { record, index, coverage, masked, bytes };
 }

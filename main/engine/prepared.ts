@@ -1,15 +1,22 @@
 import { yearLengthDays } from "../../core/model/year-length";
 import type { BackgroundBasis } from "../../core/numeric/background";
 import { backgroundBasis } from "../../core/numeric/background";
-import { quantities } from "../../core/ocean/quantities/index";
+import { quantityById } from "../../core/ocean/quantities/evaluate";
 import { backgroundFault } from "../../core/study/background-rank";
 import type { Background } from "../../core/study/band-plane";
 import { chooseSampleCells, type ReductionTarget } from "../../core/study/reduction";
-import type { BackgroundSettings, GeostrophySettings } from "../../core/study/schema";
+import type { BackgroundSettings, Study } from "../../core/study/schema";
 import type { Job } from "./job";
 import type { LoadedRecord } from "./load-record";
 import type { WorkerPool } from "./pool";
 import { sharedFloat32, sharedFloat64 } from "./shared-memory";
+import { type FieldArguments, fieldSettings } from "./tasks/field";
+
+/** Stands where fields are taken as they stand. */
+export const noBackground: Background = {
+  basis: { names: [], samples: 0, values: new Float64Array(0) },
+  coefficients: new Float64Array(0),
+};
 
 /** Cells whose whole series are kept for spectra. */
 const sampledCells = 300;
@@ -33,31 +40,26 @@ export async function fitBackgrounds(
   return { basis, coefficients };
 }
 
-/** Reduces every date to zonal means and sampled cells of every quantity. */
+/** Reduces every date to zonal means and sampled cells of one quantity. */
 export async function reduceRecord(
   loaded: LoadedRecord,
-  geostrophy: GeostrophySettings,
+  study: Study,
+  quantity: string,
   pool: WorkerPool,
   job: Job,
 ): Promise<ReductionTarget> {
   const { record } = loaded;
   const { rows, dates } = record.cube;
-  const ids = quantities.map((quantity) => quantity.id);
   const sampleCells = chooseSampleCells(record, sampledCells);
   const target: ReductionTarget = {
-    quantities: ids,
-    zonal: sharedFloat64(ids.length * rows * dates),
+    quantity,
+    zonal: sharedFloat64(rows * dates),
     sampleCells,
-    samples: sharedFloat32(ids.length * sampleCells.length * dates),
+    samples: sharedFloat32(sampleCells.length * dates),
   };
-  await job.step("Differencing heights", dates, () =>
-    pool.share("reduce", dates, (range) => ({ record, geostrophy, dates: range, target }), job),
+  const field: FieldArguments = { record, ...fieldSettings(study), background: noBackground, inBand: false };
+  await job.step(`Taking zonal means of ${quantityById(quantity).title.toLowerCase()}`, dates, () =>
+    pool.share("reduce", dates, (range) => ({ ...field, dates: range, target }), job),
   );
   return target;
-}
-
-/** Zonal means of one quantity: `series[row * dates + t]`. */
-export function zonalSeries(reduction: ReductionTarget, quantity: string, rows: number, dates: number): Float64Array {
-  const q = reduction.quantities.indexOf(quantity);
-  return reduction.zonal.subarray(q * rows * dates, (q + 1) * rows * dates);
 }

@@ -29,15 +29,13 @@ export async function spectrumResult(
     });
   }
   const { basis } = await workspace.background(open, grid, job);
-  const reduction = await workspace.reduction(open, grid, job);
-  const { sampleCells, samples, quantities } = reduction;
-  const start = quantities.indexOf(quantity) * sampleCells.length * dates;
+  const { sampleCells, samples } = await workspace.reduction(open, grid, quantity, job);
   const { values: latitudes } = record.axes.latitude;
   return workspace.pool.run(
     "spectrum",
     {
       quantity,
-      samples: samples.subarray(start, start + sampleCells.length * dates),
+      samples,
       cellWeights: Float64Array.from(sampleCells, (cell) =>
         Math.cos((latitudes[Math.floor(cell / record.cube.columns)] * Math.PI) / 180),
       ),

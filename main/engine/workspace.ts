@@ -17,7 +17,7 @@ export class Workspace {
   /** One at a time: records are large. */
   readonly #records = new Kept<LoadedRecord>(1);
   readonly #backgrounds = new Kept<Background>(2);
-  readonly #reductions = new Kept<ReductionTarget>(2);
+  readonly #reductions = new Kept<ReductionTarget>(24);
 
   constructor(workers?: number) {
     this.pool = new WorkerPool(workers);
@@ -67,11 +67,12 @@ export class Workspace {
     );
   }
 
-  async reduction(open: OpenStudy, gridId: string, job: Job): Promise<ReductionTarget> {
+  /** Zonal means and sampled cells of one quantity. */
+  async reduction(open: OpenStudy, gridId: string, quantity: string, job: Job): Promise<ReductionTarget> {
     const loaded = await this.record(open, gridId, job);
     return this.#reductions.get(
-      JSON.stringify([recordKey(loaded.index, open), open.study.geostrophy]),
-      () => reduceRecord(loaded, open.study.geostrophy, this.pool, job),
+      JSON.stringify([recordKey(loaded.index, open), open.study.geostrophy, open.study.space, quantity]),
+      () => reduceRecord(loaded, open.study, quantity, this.pool, job),
       () => !job.cancelled,
     );
   }

@@ -1,5 +1,5 @@
 import { useEffect } from "react";
-import { type BandEdge, stepPeriod } from "../state/band-edges";
+import { type BandEdge, bandLimits, shownEdges, stepPeriod } from "../state/band-edges";
 import type { Bench } from "../state/bench";
 import { type KeyAction, type KeyPress, keyAction } from "../state/keys";
 
@@ -41,8 +41,11 @@ function perform(bench: Bench, action: KeyAction): void {
 }
 
 function stepEdge(bench: Bench, edge: BandEdge, direction: 1 | -1): void {
-  const band = bench.store.getState().studies?.present.study.band;
-  if (band) bench.setEdge(edge, stepPeriod(band[edge], direction), `key ${edge}`);
+  const { studies, record } = bench.store.getState();
+  if (!studies || !record) return;
+  const step = Math.abs(record.time.step);
+  const edges = shownEdges(studies.present.study.band, bandLimits(step, step * record.time.values.length));
+  bench.setEdge(edge, stepPeriod(edges[edge], direction), `key ${edge}`);
 }
 
 function focusKind(target: EventTarget | null): KeyPress["focus"] {

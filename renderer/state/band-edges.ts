@@ -21,6 +21,14 @@ export function bandLimits(stepDays: number, recordDays: number): BandLimits {
   return { leastDays, mostDays: Math.max(leastDays + 1, Math.floor(recordDays + 1e-6)) };
 }
 
+/** The edges of a band as handles show them: an open side stands at its limit. */
+export function shownEdges(
+  band: { readonly shortestDays: number | null; readonly longestDays: number | null },
+  limits: BandLimits,
+): BandEdges {
+  return { shortestDays: band.shortestDays ?? limits.leastDays, longestDays: band.longestDays ?? limits.mostDays };
+}
+
 /** Range that one edge may move in while the other stays: whole days, the edges at least a day apart. */
 export function edgeRange(edges: BandEdges, edge: BandEdge, limits: BandLimits): readonly [number, number] {
   if (edge === "shortestDays") return [limits.leastDays, Math.max(limits.leastDays, Math.ceil(edges.longestDays) - 1)];
@@ -28,8 +36,13 @@ export function edgeRange(edges: BandEdges, edge: BandEdge, limits: BandLimits):
 }
 
 /** The band with one edge moved to `days`, snapped to whole days and held within its range. */
-export function moveEdge<Band extends BandEdges>(band: Band, edge: BandEdge, days: number, limits: BandLimits): Band {
-  const [least, most] = edgeRange(band, edge, limits);
+export function moveEdge<Band extends { readonly shortestDays: number | null; readonly longestDays: number | null }>(
+  band: Band,
+  edge: BandEdge,
+  days: number,
+  limits: BandLimits,
+): Band {
+  const [least, most] = edgeRange(shownEdges(band, limits), edge, limits);
   const snapped = Math.min(most, Math.max(least, Math.round(days)));
   return snapped === band[edge] || Number.isNaN(snapped) ? band : { ...band, [edge]: snapped };
 }

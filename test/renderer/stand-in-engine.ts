@@ -63,7 +63,9 @@ function zonalMean(row: number, date: number, share: number): number {
 
 function response(band: Study["band"]): { frequency: Float64Array; amplitude: Float64Array } {
   const frequency = Float64Array.from({ length: 150 }, (_, i) => (i + 1) / (dates * stepDays));
-  const amplitude = frequency.map((f) => (f >= 1 / band.longestDays && f <= 1 / band.shortestDays ? 1 : 0));
+  const amplitude = frequency.map((f) =>
+    f >= 1 / (band.longestDays ?? Infinity) && f <= 1 / (band.shortestDays ?? 0) ? 1 : 0,
+  );
   return { frequency, amplitude };
 }
 
@@ -110,7 +112,7 @@ export function standInEngine(calls: string[] = []): Engine {
     async latitudes({ open: { study }, choice, dateIndex }) {
       calls.push("latitudes");
       await pause(20);
-      const share = choice.inBand ? Math.min(1, 60 / study.band.shortestDays) : 1.5;
+      const share = choice.inBand ? Math.min(1, 60 / (study.band.shortestDays ?? 60)) : 1.5;
       const map = Float32Array.from({ length: rows * columns }, (_, cell) =>
         ocean[cell] === 0 ? Number.NaN : value(Math.floor(cell / columns), cell % columns, dateIndex, share),
       );

@@ -17,6 +17,8 @@ function listed(...parts: readonly string[]): string {
 export function periodsText(input: LatitudesInput): string {
   if (!isFiltered(input)) return "all periods";
   const { shortestDays, longestDays } = input.band;
+  if (longestDays === null) return `periods over ${formatSignificant(shortestDays ?? 0, 4)} days`;
+  if (shortestDays === null) return `periods under ${formatSignificant(longestDays, 4)} days`;
   return `periods ${formatSignificant(shortestDays, 4)}–${formatSignificant(longestDays, 4)} days`;
 }
 

@@ -14,7 +14,12 @@ export interface LatitudesInput {
     /** Signed quantities get the diverging colour map. */
     readonly signed: boolean;
   };
-  readonly band: { readonly shortestDays: number; readonly longestDays: number; readonly filter: string };
+  /** null: that side of the band is open. */
+  readonly band: {
+    readonly shortestDays: number | null;
+    readonly longestDays: number | null;
+    readonly filter: string;
+  };
   /** "20–41° N, 150–125° W". */
   readonly region: string;
   /** "Grid A · 0.125° · 3 d". */

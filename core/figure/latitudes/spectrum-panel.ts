@@ -43,7 +43,10 @@ function periodRange({ spectrum, record, band }: LatitudesInput): [longest: numb
   const longest = frequencies.length > 0 ? 1 / frequencies[0] : span;
   const shortest = frequencies.length > 0 ? 1 / frequencies[frequencies.length - 1] : 2 * step;
   if (band.filter === "none") return [longest, shortest];
-  return [Math.max(longest, band.longestDays * edgeRoom), Math.min(shortest, band.shortestDays / edgeRoom)];
+  return [
+    Math.max(longest, (band.longestDays ?? 0) * edgeRoom),
+    Math.min(shortest, (band.shortestDays ?? shortest * edgeRoom) / edgeRoom),
+  ];
 }
 
 /** Labels of the vertical scale in display units; asked for before the layout, which leaves room for them. */
@@ -85,9 +88,14 @@ export function spectrumMarks(
   ];
 }
 
+/** Pixels of the band's edges; an open side lies on the frame. */
+function edgePlaces({ band }: LatitudesInput, panel: PanelFrame): [left: number, right: number] {
+  const { from, to } = panel.horizontal;
+  return [pixelX(panel, band.longestDays ?? from), pixelX(panel, band.shortestDays ?? to)];
+}
+
 function bandMarks(input: LatitudesInput, panel: PanelFrame, theme: Theme): Mark[] {
-  const left = pixelX(panel, input.band.longestDays);
-  const right = pixelX(panel, input.band.shortestDays);
+  const [left, right] = edgePlaces(input, panel);
   const { frequency, amplitude } = input.result.response;
   const passed = panel.vertical.from / headroom;
   const response = polylinePath(
@@ -111,18 +119,17 @@ function bandMarks(input: LatitudesInput, panel: PanelFrame, theme: Theme): Mark
 /** Lines at both edges of the band and their periods above the frame, outside the band; joined where they would meet. */
 function edgeMarks(input: LatitudesInput, panel: PanelFrame, base: number, theme: Theme, sizes: TypeSizes): Mark[] {
   const { longestDays, shortestDays } = input.band;
-  const left = pixelX(panel, longestDays);
-  const right = pixelX(panel, shortestDays);
+  const [left, right] = edgePlaces(input, panel);
   const bottom = panel.y + panel.height;
   const lines = linePath(left, panel.y - 4, left, bottom) + linePath(right, panel.y - 4, right, bottom);
   const style = { size: sizes.small, weight: 700, fill: theme.amberInk } as const;
-  const longText = `${formatSignificant(longestDays, 4)} d`;
-  const shortText = `${formatSignificant(shortestDays, 4)} d`;
+  const longText = longestDays === null ? "open" : `${formatSignificant(longestDays, 4)} d`;
+  const shortText = shortestDays === null ? "open" : `${formatSignificant(shortestDays, 4)} d`;
   const leftEnd = Math.max(left - 5, 4 + textWidth(longText, sizes.small, 700));
   const rightStart = Math.min(right + 5, panel.x + panel.width - textWidth(shortText, sizes.small, 700));
   const edges = pathMark("spectrum-edges", lines, { stroke: theme.amber, strokeWidth: dataWidth + 0.4 });
   if (leftEnd + 4 > rightStart) {
-    const text = `${formatSignificant(shortestDays, 4)}–${longText}`;
+    const text = `${shortText.replace(" d", "")}–${longText}`;
     const half = textWidth(text, sizes.small, 700) / 2;
     const middle = Math.min(panel.x + panel.width - half, Math.max(panel.x + half, (left + right) / 2));
     return [edges, textMark("spectrum-periods", middle, base, text, { ...style, anchor: "middle" })];

@@ -3,7 +3,7 @@ import type { Profile, SpectrumResult } from "../../../core/model/results";
 import { quantities } from "../../../core/ocean/quantities/index";
 import { meanProfile } from "../../../core/study/profile";
 import type { Job } from "../job";
-import { type FieldStages, fieldStages, pictureSeries } from "../latitudes";
+import { type FieldStages, fieldArguments, fieldStages, pictureSeries, type QuantityArguments } from "../latitudes";
 import type { LoadedRecord } from "../load-record";
 import type { WorkerPool } from "../pool";
 import { spectrumResult } from "../spectrum";
@@ -42,16 +42,9 @@ export interface Analysis {
 export async function analyse(workspace: Workspace, open: OpenStudy, job: Job): Promise<Analysis> {
   const grid = open.study.grids[0].id;
   const hasBand = open.study.band.filter !== "none";
-  const stages = await fieldStages(workspace, open, grid, hasBand, job);
+  const stages = await fieldStages(workspace, open, grid, { quantity: "u", inBand: hasBand }, job);
   const loaded = await workspace.record(open, grid, job);
-  const raw: FieldArguments = {
-    record: stages.record,
-    geostrophy: open.study.geostrophy,
-    background: stages.background,
-    quantity: "u",
-    inBand: false,
-    filter: stages.filter,
-  };
+  const raw: QuantityArguments = { ...fieldArguments(stages, open.study, false), quantity: "u" };
   const banded = { ...raw, inBand: true };
   const { pool } = workspace;
   return {
@@ -74,7 +67,7 @@ export async function analyse(workspace: Workspace, open: OpenStudy, job: Job): 
 async function zonalAnalysis(
   pool: WorkerPool,
   stages: FieldStages,
-  field: FieldArguments,
+  field: QuantityArguments,
   job: Job,
 ): Promise<ZonalAnalysis> {
   const { dates, rows } = stages.record.cube;

@@ -1,5 +1,6 @@
 import { type NetcdfVariable, writeNetcdf4 } from "../../writers/netcdf4";
 import type { Job } from "../job";
+import { fieldArguments } from "../latitudes";
 import { requireMemory } from "../memory";
 import type { WorkerPool } from "../pool";
 import type { Moments } from "../tasks/moments";
@@ -99,7 +100,7 @@ function ratio(total: Float64Array, count: Int32Array, finish: (value: number) =
 }
 
 async function everyDate(analysis: Analysis, pool: WorkerPool, job: Job): Promise<NetcdfVariable[]> {
-  const { record, background, filter } = analysis.stages;
+  const { record } = analysis.stages;
   const { dates, rows, columns } = record.cube;
   const modes = analysis.band ? [false, true] : [false];
   requireMemory(dates * rows * columns * 4 * mappedQuantities.length * modes.length, 'outputs.fields "all"');
@@ -107,7 +108,7 @@ async function everyDate(analysis: Analysis, pool: WorkerPool, job: Job): Promis
   const variables: NetcdfVariable[] = [];
   for (const inBand of modes) {
     const whole = ids.map(() => new Float32Array(dates * rows * columns));
-    const shared = { record, geostrophy: analysis.open.study.geostrophy, background, inBand, filter, quantities: ids };
+    const shared = { ...fieldArguments(analysis.stages, analysis.open.study, inBand), quantities: ids };
     await job.step(inBand ? "Filtering every map" : "Differencing every map", dates, async () => {
       const blocks = await pool.share(
         "fieldPlanes",

@@ -1,5 +1,5 @@
-import { weightShare } from "../../../core/numeric/band-filter";
 import { quantityById } from "../../../core/ocean/quantities/evaluate";
+import { bridgedDates } from "../../../core/study/band";
 import { type NetcdfVariable, writeNetcdf4 } from "../../writers/netcdf4";
 import type { Analysis } from "./analysis";
 import { globalAttributes, latitudeAttributes, timeAttributes, variableAttributes } from "./cf-attributes";
@@ -64,9 +64,14 @@ export async function writeLatitudeTime(path: string, analysis: Analysis): Promi
       ...(filter
         ? [
             along(
-              "filter_weight",
-              weightShare(filter, record.hasData),
-              "share of the filter's weight on dates with data",
+              "filter_end",
+              Float64Array.from(filter.ends(record.hasData)),
+              "1 where the value in the band rests on too little of the filter's weight, or on padding",
+            ),
+            along(
+              "bridged",
+              Float64Array.from(bridgedDates(analysis.open.study.band, record)),
+              "1 where a date without data is bridged by the filter",
             ),
           ]
         : []),

@@ -1,9 +1,9 @@
 import { formatDay } from "../../../core/model/calendar";
+import { crossingDays } from "../../../core/study/band";
 import { cautionsFor } from "../../../core/study/cautions";
 import { leastZonalCoverage } from "../../../core/study/reduction";
 import type { Study } from "../../../core/study/schema";
 import type { Analysis } from "./analysis";
-import { crossingPeriods } from "./half-amplitude";
 import { version } from "./version";
 
 /** methods.md: what was done, in sentences whose numbers are the study's own, with the papers to cite and the cautions. */
@@ -88,16 +88,29 @@ function backgroundText({ background }: Study, { stages }: Analysis): string {
 
 function bandText({ band }: Study, { stages }: Analysis): string {
   const { filter, record } = stages;
-  if (!filter) return "No band-pass was applied.";
-  const { time, cube } = record;
-  const halves = crossingPeriods(filter, 0.5, time.step, cube.dates * time.step).map((days) => `${days.toFixed(1)}`);
+  if (!filter || band.filter === "none") return "No band-pass was applied.";
+  const { time } = record;
+  const periods = (level: number) => listed(crossingDays(filter, level, time).map((days) => days.toFixed(1)));
+  const weights = filter.reach;
+  const kinds = {
+    lanczos: `a Lanczos filter (Duchon 1979) of ${weights} weights a side, ${2 * weights + 1} in all`,
+    butterworth: `a Butterworth filter of order ${band.order} run forward and back with odd extension at the ends`,
+    "running-mean": "running means",
+  } as const;
   return (
-    `Periods of ${band.shortestDays} to ${band.longestDays} days were kept by a Lanczos band-pass (Duchon 1979) of ${filter.halfWidth} weights a side, ` +
-    `${2 * filter.halfWidth + 1} in all; its response is one half in amplitude at ${listed(halves)} days. Missing dates get no weight and the weights ` +
-    "left are scaled to the same sum; dates without data stay blank. A value that rests on less than 90 % of the weight is marked. " +
-    "Heights are filtered first and differenced after, which is the same for a linear filter; where single cells of a map are missing " +
-    "the picture filters each latitude's zonal means, and the map each cell's own heights."
+    `${keptText(band)} by ${kinds[band.filter]}; its response is one half in amplitude at ${periods(0.5)} days and one half in power ` +
+    `at ${periods(Math.SQRT1_2)} days. Gaps of up to ${band.bridgeDays} days are bridged ` +
+    `(${band.filter === "lanczos" ? "missing dates get no weight and the weights left are scaled to the same sum" : band.filter === "butterworth" ? "by straight lines" : "a missing date is left out with the one opposite"}); ` +
+    "the filter does not reach across longer ones. Dates without data stay blank. Values that rest on less than 90 % of the filter's weight, " +
+    "or on padding, are marked. Heights are filtered first and differenced after, which is the same for a linear filter; where single cells " +
+    "of a map are missing the picture filters each latitude's zonal means, and the map each cell's own heights."
   );
+}
+
+function keptText({ shortestDays, longestDays }: Study["band"]): string {
+  if (shortestDays === null) return `Periods below ${longestDays} days were kept`;
+  if (longestDays === null) return `Periods above ${shortestDays} days were kept`;
+  return `Periods of ${shortestDays} to ${longestDays} days were kept`;
 }
 
 function references({ geostrophy, band }: Study): string[] {

@@ -1,10 +1,10 @@
 import { formatDay } from "../../../core/model/calendar";
+import { bridgedDates, crossingDays } from "../../../core/study/band";
 import { cautionsFor } from "../../../core/study/cautions";
-import { filterEnds } from "../latitudes";
+import { daysLost } from "../latitudes";
 import type { Moments } from "../tasks/moments";
 import { type Analysis, mappedQuantities } from "./analysis";
 import type { InputFile } from "./fingerprint";
-import { crossingPeriods } from "./half-amplitude";
 import { version } from "./version";
 
 export interface Quantified {
@@ -91,23 +91,23 @@ function areaRms({ squares, count }: Moments, q: number, { stages }: Analysis): 
   return Math.sqrt(sum / weight);
 }
 
-function filterOf({ stages }: Analysis): object | null {
+function filterOf({ stages, open }: Analysis): object | null {
   const { filter, record } = stages;
   if (!filter) return null;
-  const { time, cube } = record;
-  const ends = filterEnds(filter, new Uint8Array(cube.dates).fill(1));
-  const firstTrusted = ends.indexOf(0);
+  const { time, cube, hasData } = record;
+  const days = (level: number) => crossingDays(filter, level, time).map((period) => number(period, "days"));
   return {
-    weightsEachSide: filter.halfWidth,
-    halfAmplitudePeriods: crossingPeriods(filter, 0.5, time.step, cube.dates * time.step).map((days) =>
-      number(days, "days"),
-    ),
-    halfPowerPeriods: crossingPeriods(filter, Math.SQRT1_2, time.step, cube.dates * time.step).map((days) =>
-      number(days, "days"),
-    ),
-    lostAtEachEnd: number((firstTrusted < 0 ? cube.dates : firstTrusted) * time.step, "days"),
-    markedDates: filterEnds(filter, record.hasData).reduce((sum, flag) => sum + flag, 0),
+    reachEachSide: number(filter.reach * time.step, "days"),
+    halfAmplitudePeriods: days(0.5),
+    halfPowerPeriods: days(Math.SQRT1_2),
+    lostAtEachEnd: number(daysLost(filter, cube.dates, time.step), "days"),
+    markedDates: countOnes(filter.ends(hasData)),
+    bridgedDates: countOnes(bridgedDates(open.study.band, record)),
   };
+}
+
+function countOnes(flags: Uint8Array): number {
+  return flags.reduce((sum, flag) => sum + flag, 0);
 }
 
 function number(value: number, unit: string): Quantified {

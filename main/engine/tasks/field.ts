@@ -1,33 +1,49 @@
 import { planeOf } from "../../../core/model/cube";
-import type { BandFilter } from "../../../core/numeric/band-filter";
-import { type GridGeometry, gridGeometry } from "../../../core/ocean/grid-geometry";
+import type { GridGeometry } from "../../../core/ocean/grid-geometry";
+import type { PlaneLookup } from "../../../core/ocean/quantities/define";
 import { planesFrom } from "../../../core/ocean/quantities/evaluate";
+import { timeFilter } from "../../../core/study/band";
 import { type Background, bandHeightPlane } from "../../../core/study/band-plane";
+import { geometryOf } from "../../../core/study/geometry";
 import type { HeightRecord } from "../../../core/study/record";
-import type { GeostrophySettings } from "../../../core/study/schema";
+import type { Study } from "../../../core/study/schema";
+import { spaceFilter } from "../../../core/study/space-filter";
 
-/** A field of the record: which quantity, as it stands or in the band. */
-export interface FieldArguments {
+/** The part of a study that decides what a field is. */
+export type FieldSettings = Pick<Study, "geostrophy" | "space" | "band">;
+
+export function fieldSettings({ geostrophy, space, band }: Study): FieldSettings {
+  return { geostrophy, space, band };
+}
+
+/** What fields of a record are made from, as they stand or in the band. Plain data: goes to the workers. */
+export interface FieldArguments extends FieldSettings {
   readonly record: HeightRecord;
-  readonly geostrophy: GeostrophySettings;
   readonly background: Background;
-  readonly quantity: string;
   readonly inBand: boolean;
-  readonly filter: BandFilter | null;
 }
 
-export function geometryOf(record: HeightRecord, geostrophy: GeostrophySettings): GridGeometry {
-  return gridGeometry(record.axes, geostrophy, "geostrophy");
+/** Fields of a record, date by date. */
+export interface FieldSource {
+  readonly geometry: GridGeometry;
+  /** Every quantity on one date; NaN everywhere on a date without data. */
+  readonly on: (date: number) => PlaneLookup;
 }
 
-/** Height on one date, as it stands or in the band. Dates without data are NaN everywhere. */
-export function heightsOn(args: Omit<FieldArguments, "quantity">, date: number): Float64Array {
-  const { record, inBand, filter, background } = args;
-  if (!inBand || !record.hasData[date]) return planeOf(record.cube, date);
-  return bandHeightPlane(record, date, filter, background);
-}
-
-/** The field's plane on one date. */
-export function fieldOn(args: FieldArguments, geometry: GridGeometry, date: number): Float64Array {
-  return planesFrom(heightsOn(args, date), geometry)(args.quantity);
+/** Designs geometry and filters once for the dates of a task. Space filters act on height, before anything is derived. */
+export function fieldSource({ record, geostrophy, space, background, band, inBand }: FieldArguments): FieldSource {
+  const geometry = geometryOf(record.axes, geostrophy);
+  const filter = inBand ? timeFilter(band, record.time) : null;
+  const inSpace = spaceFilter(space, record.axes, geometry);
+  return {
+    geometry,
+    on: (date) => {
+      if (inBand && record.hasData[date]) {
+        return planesFrom(inSpace(bandHeightPlane(record, date, filter, background)), geometry);
+      }
+      const heights = planeOf(record.cube, date);
+      const anomaly = heights.map((value, cell) => value - record.mean[cell]);
+      return planesFrom(inSpace(heights), geometry, inSpace(anomaly));
+    },
+  };
 }

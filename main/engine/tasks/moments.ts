@@ -1,6 +1,5 @@
-import { planesFrom } from "../../../core/ocean/quantities/evaluate";
 import type { JobFlags } from "../job";
-import { type FieldArguments, geometryOf, heightsOn } from "./field";
+import { type FieldArguments, fieldSource } from "./field";
 
 /** Sums over dates, cell by cell: `sum[q][cell]`, `squares[q][cell]`, and how many valid dates entered. */
 export interface Moments {
@@ -14,14 +13,14 @@ export interface Moments {
  * Counts one a date.
  */
 export function momentsTask(
-  args: Omit<FieldArguments, "quantity"> & {
+  args: FieldArguments & {
     readonly quantities: readonly string[];
     readonly dates: readonly [number, number];
   },
   job: JobFlags,
 ): Moments {
-  const geometry = geometryOf(args.record, args.geostrophy);
-  const cells = geometry.rows * geometry.columns;
+  const source = fieldSource(args);
+  const cells = source.geometry.rows * source.geometry.columns;
   const sum = args.quantities.map(() => new Float64Array(cells));
   const squares = args.quantities.map(() => new Float64Array(cells));
   const count = args.quantities.map(() => new Int32Array(cells));
@@ -29,7 +28,7 @@ export function momentsTask(
     job.poll();
     job.count();
     if (!args.record.hasData[date]) continue;
-    const planes = planesFrom(heightsOn(args, date), geometry);
+    const planes = source.on(date);
     args.quantities.forEach((id, q) => {
       const plane = planes(id);
       for (let cell = 0; cell < cells; cell++) {

@@ -7,7 +7,7 @@ import { Overlay } from "../../figure/Overlay";
 import type { Pointed } from "../../figure/pointing";
 import { SceneView } from "../../figure/SceneView";
 import { useSize } from "../../figure/use-size";
-import { bandLimits } from "../../state/band-edges";
+import { bandLimits, shownEdges } from "../../state/band-edges";
 import type { Picture } from "../../state/bench-state";
 import { nearestIndex } from "../../state/cursor";
 import { heldMarks, pictureScene } from "./picture-scene";
@@ -48,6 +48,7 @@ export function LatitudesFigure({ picture, ground }: LatitudesFigureProps) {
   };
   const spectrumPanel = scene?.panels.find((panel) => panel.id === "spectrum");
   const step = Math.abs(record.time.step);
+  const limits = bandLimits(step, step * record.time.values.length);
 
   return (
     <div
@@ -71,8 +72,8 @@ export function LatitudesFigure({ picture, ground }: LatitudesFigureProps) {
           {spectrumPanel && band.filter !== "none" ? (
             <BandHandles
               panel={spectrumPanel}
-              band={band}
-              limits={bandLimits(step, step * record.time.values.length)}
+              band={shownEdges(band, limits)}
+              limits={limits}
               onMove={(edge, days) => bench.setEdge(edge, days, `edge ${edge}`)}
               onEnd={() => bench.endGesture()}
             />

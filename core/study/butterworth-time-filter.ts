@@ -1,0 +1,44 @@
+import { type Sections, zeroPhaseResponse } from "../numeric/filters/butterworth";
+import { type BridgedPiece, bridgedPieces, knownSamples, unbridgeRow } from "../numeric/filters/pieces";
+import { fewestSamples, paddingReach, zeroPhaseFilter } from "../numeric/filters/zero-phase";
+import { zeroPhaseRow } from "../numeric/filters/zero-phase-row";
+import { bridgeGaps } from "../numeric/gaps";
+import type { TimeFilter } from "./time-filter";
+
+/**
+ * Second-order sections run forward and back over each piece, short gaps bridged by straight lines. A piece must be longer
+ * than the padding; values within the padding's reach of a piece's ends are marked.
+ */
+export function butterworthTimeFilter(sections: Sections, bridge: number): TimeFilter {
+  const fewest = fewestSamples(sections);
+  const reach = paddingReach(sections);
+  const isLong = ({ from, to }: BridgedPiece) => to - from >= fewest;
+  return {
+    reach,
+    response: (frequency) => zeroPhaseResponse(sections, frequency),
+    apply: (series, at) => {
+      const { values } = bridgeGaps(series, bridge);
+      const out = new Float64Array(series.length).fill(Number.NaN);
+      for (const piece of bridgedPieces(knownSamples(series), bridge).filter(isLong)) {
+        out.set(zeroPhaseFilter(values.slice(piece.from, piece.to), sections), piece.from);
+      }
+      return at ? Float64Array.from(at, (t) => out[t]) : out;
+    },
+    row: (known, date) => {
+      const piece = bridgedPieces(known, bridge).find(({ from, to }) => date >= from && date < to);
+      if (!piece || !isLong(piece)) return null;
+      const own = zeroPhaseRow(piece.to - piece.from, date - piece.from, sections);
+      unbridgeRow(own, known, piece);
+      const row = new Float64Array(known.length);
+      row.set(own, piece.from);
+      return row;
+    },
+    ends: (known) => {
+      const flags = new Uint8Array(known.length).fill(1);
+      for (const { from, to } of bridgedPieces(known, bridge).filter(isLong)) {
+        if (to - reach > from + reach) flags.fill(0, from + reach, to - reach);
+      }
+      return flags;
+    },
+  };
+}
