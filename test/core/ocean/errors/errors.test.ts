@@ -8,6 +8,7 @@ import { addWeight, clearWeights, weightSum } from "../../../../core/ocean/error
 import { geostrophicVelocity } from "../../../../core/ocean/geostrophy";
 import { type GridGeometry, gridGeometry } from "../../../../core/ocean/grid-geometry";
 import { relativeVorticity } from "../../../../core/ocean/vorticity";
+import { cpuMilliseconds } from "../../../cpu-time";
 import { expectAllClose, expectClose } from "../../../expect-close";
 import { evenAxes, planeFrom, sphere } from "../grids";
 
@@ -213,9 +214,9 @@ test("a plane of 90 × 100 cells with seven points and correlated error takes be
   const geometry = gridGeometry(wide, sphere, "test");
   const height = planeFrom(wide, (x, y) => Math.sin(x) * Math.cos(y));
   const times = [1, 2, 3].map(() => {
-    const start = performance.now();
+    const start = cpuMilliseconds();
     errorPlanes(height, wide, geometry, { sigmaMetres: 0.02, correlationKm: 100 });
-    return performance.now() - start;
+    return cpuMilliseconds() - start;
   });
   expect(Math.min(...times)).toBeLessThan(500);
 });
