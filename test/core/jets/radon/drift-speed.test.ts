@@ -77,6 +77,6 @@ test("bootstrap limits hold the true speed for at least 90 of 100 noisy records"
     expect(got.limits).toBe("bootstrap");
     if (got.low95 <= 0.04 && 0.04 <= got.high95) held++;
   }
-  console.warn(held);
+
   expect(held).toBeGreaterThanOrEqual(90);
 });
