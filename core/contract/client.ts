@@ -171,6 +171,7 @@ export function connectDoor(port: Port, options: ConnectOptions = {}): DoorConne
     load: (args, callOptions) => call("load", args, callOptions),
     latitudes: (args, callOptions) => call("latitudes", args, callOptions),
     spectrum: (args, callOptions) => call("spectrum", args, callOptions),
+    velocities: (args, callOptions) => call("velocities", args, callOptions),
     run: (args, callOptions) => call("run", args, callOptions),
     save: (args, callOptions) => call("save", args, callOptions),
   };

@@ -1,11 +1,18 @@
 import type { Axis, TimeAxis } from "../model/axis";
 import type { FaultData } from "../model/errors";
-import type { BandResponse, Plane, Profile, SpectrumResult } from "../model/results";
+import type {
+  BandResponse,
+  FieldError,
+  Plane,
+  Profile,
+  SpectrumResult,
+  SuppliedVelocityReport,
+} from "../model/results";
 import type { FileReport } from "../model/source";
 import type { Study } from "../study/schema";
 import type { CallOptions } from "./job";
 
-export type { BandResponse, Plane, Profile, SpectrumResult };
+export type { BandResponse, FieldError, Plane, Profile, SpectrumResult, SuppliedVelocityReport };
 
 /** A study with the folder its relative paths start from. */
 export interface OpenStudy {
@@ -40,6 +47,8 @@ export interface RecordOverview {
   /** 1 where the cell is valid on at least one date. Row-major latitude × longitude. */
   readonly ocean: Uint8Array;
   readonly timeDeviationDays: number;
+  /** 1 on rows whose velocities come (more than 1 %) from the blend across the equator. */
+  readonly blendedRows: Uint8Array;
   readonly cautions: readonly Caution[];
   /** Bytes the record takes in memory. */
   readonly bytes: number;
@@ -70,6 +79,11 @@ export interface LatitudesResult {
   /** Colour limits of the latitude–time picture: zonal means are weaker than the map they average. */
   readonly pictureLimits: readonly [number, number];
   readonly response: BandResponse;
+  /**
+   * What the study's height error makes of the field; null where the study names none or the quantity is not height, u, v,
+   * vorticity or vorticity over f. In the band, errors of different dates count as independent.
+   */
+  readonly error: FieldError | null;
 }
 
 export interface RunSummaryPlace {
@@ -104,6 +118,11 @@ export interface Engine {
     request: { readonly open: OpenStudy; readonly grid: string; readonly quantity: string },
     options?: CallOptions,
   ): Promise<SpectrumResult>;
+  /** Compares the velocities that the files supply with ours; null where they supply none. */
+  velocities(
+    request: { readonly open: OpenStudy; readonly grid: string },
+    options?: CallOptions,
+  ): Promise<SuppliedVelocityReport | null>;
   /** Writes the result folder, whole or not at all. */
   run(
     request: { readonly open: OpenStudy; readonly folder: string; readonly overwrite: boolean },

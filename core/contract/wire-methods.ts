@@ -34,6 +34,7 @@ export const requestShapes: RequestShapes = {
   load: { open: "study", grid: "text" },
   latitudes: { open: "study", grid: "text", choice: "choice", dateIndex: "count", columns: "count" },
   spectrum: { open: "study", grid: "text", quantity: "text" },
+  velocities: { open: "study", grid: "text" },
   run: { open: "study", folder: "text", overwrite: "flag" },
   save: { open: "study", path: "text" },
 };

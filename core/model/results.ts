@@ -1,3 +1,5 @@
+import type { HeightReference } from "./source";
+
 /** A picture of latitude × something, row-major, latitudes ascending, NaN where missing. */
 export interface Plane {
   readonly rows: number;
@@ -34,4 +36,67 @@ export interface SpectrumResult {
   readonly segmentDays: number;
   readonly window: string;
   readonly units: string;
+}
+
+/** How two velocities agree, m s-1. */
+export interface AgreementNumbers {
+  readonly count: number;
+  readonly rmsDifference: number;
+  /** Mean of ours minus supplied. */
+  readonly bias: number;
+  readonly correlation: number;
+  readonly rmsOurs: number;
+  readonly rmsSupplied: number;
+}
+
+export interface ComponentAgreementNumbers {
+  readonly all: AgreementNumbers;
+  /** About each one's mean over the compared dates. */
+  readonly anomalies: AgreementNumbers;
+}
+
+/** The velocities that a grid's files supply beside its heights, compared with ours. */
+export interface SuppliedVelocityReport {
+  readonly eastward: string;
+  readonly northward: string;
+  readonly reference: HeightReference;
+  readonly matchesHeight: boolean | null;
+  readonly foundBy: string;
+  readonly notes: readonly string[];
+  /** Dates that were compared. */
+  readonly dates: number;
+  readonly agreement: {
+    readonly u: ComponentAgreementNumbers;
+    readonly v: ComponentAgreementNumbers;
+    readonly bands: readonly {
+      readonly south: number;
+      readonly north: number;
+      readonly u: ComponentAgreementNumbers;
+      readonly v: ComponentAgreementNumbers;
+    }[];
+    /** Share of the mean square difference that is constant in time. */
+    readonly meanShare: number;
+    readonly oursOnly: number;
+    readonly suppliedOnly: number;
+  };
+  /** The offered conventions, the best first, compared where the widest stencil is complete. */
+  readonly conventions: readonly {
+    readonly convention: {
+      readonly stencil: number;
+      readonly earth: string;
+      readonly radius: number;
+      readonly gravity: "latitude" | number;
+    };
+    readonly count: number;
+    readonly rmsDifference: number;
+    readonly rmsAnomalyDifference: number;
+    readonly rmsSupplied: number;
+  }[];
+}
+
+/** Standard errors of a field that come from the height's error, SI units. */
+export interface FieldError {
+  readonly map: Plane;
+  /** Of the zonal mean on a date. */
+  readonly onDate: Float64Array;
 }

@@ -1,4 +1,5 @@
 import { formatDay } from "../model/calendar";
+import { geometryOf } from "./geometry";
 import type { HeightRecord } from "./record";
 import type { Study } from "./schema";
 
@@ -34,10 +35,14 @@ const rules: Readonly<Record<string, Rule>> = {
       : null;
   },
   equator: ({ geostrophy }, { axes }) => {
-    const rows = axes.latitude.values.filter((value) => Math.abs(value) < geostrophy.equatorDegrees).length;
-    return rows > 0
-      ? `${rows} rows within ${geostrophy.equatorDegrees}° of the equator are blank: f vanishes there.`
-      : null;
+    const { blanked, equatorBlend, equatorNote } = geometryOf(axes, geostrophy);
+    const rows = blanked.reduce((sum, flag) => sum + flag, 0);
+    if (rows === 0) return null;
+    const belt = `within ${geostrophy.equatorDegrees}° of the equator`;
+    if (equatorBlend)
+      return `Velocities near the equator come in part from a beta-plane fit (15 % is a fair error there); what divides by f is blank ${belt}.`;
+    const why = equatorNote ? ` The blend asked for was not made: ${equatorNote}.` : "";
+    return `${rows} rows ${belt} are blank: f vanishes there.${why}`;
   },
   gaps: (_, { hasData, time }) => {
     const missing = hasData.length - hasData.reduce((sum, flag) => sum + flag, 0);
@@ -45,6 +50,10 @@ const rules: Readonly<Record<string, Rule>> = {
     const first = formatDay(time.calendar, time.values[hasData.indexOf(0)]);
     return `${missing} of ${hasData.length} dates have no data (the first is ${first}); they stay blank and the filter leans on their neighbours.`;
   },
+  space: ({ space }) =>
+    space.meridional || space.zonal || space.removeSurface || space.removeZonalMean
+      ? "Heights are filtered in space before currents are taken: speeds, energies and zonal means are of what is left."
+      : null,
   coast: (_, record) => {
     const share = nearLandShare(record);
     return share >= 0.01

@@ -2,7 +2,9 @@ import { dirname, relative, resolve } from "node:path";
 import type { Engine, OpenStudy, RecognisedFile, RecordOverview } from "../../core/contract/engine";
 import type { CallOptions } from "../../core/contract/job";
 import { faultData, isUserFault } from "../../core/model/errors";
+import { blendedRows } from "../../core/ocean/equator";
 import { cautionsFor } from "../../core/study/cautions";
+import { geometryOf } from "../../core/study/geometry";
 import { readStudy } from "../../core/study/read";
 import type { Study } from "../../core/study/schema";
 import { describeFile } from "../readers/describe";
@@ -13,6 +15,7 @@ import { openStudy } from "./open-study";
 import { runStudy } from "./run/run-study";
 import { sourceFiles } from "./source-files";
 import { spectrumResult } from "./spectrum";
+import { suppliedVelocity } from "./supplied-velocity";
 import { Workspace } from "./workspace";
 
 /** The engine: everything Strake computes, behind the contract. One record is kept in memory at a time. */
@@ -48,6 +51,7 @@ export function createEngine(options: { readonly workers?: number } = {}): Engin
           coverage,
           ocean: record.ocean.slice(),
           timeDeviationDays: index.timeDeviationDays,
+          blendedRows: blendedRows(geometryOf(record.axes, open.study.geostrophy)),
           cautions: cautionsFor(open.study, record),
           bytes,
         } satisfies RecordOverview;
@@ -55,6 +59,7 @@ export function createEngine(options: { readonly workers?: number } = {}): Engin
     latitudes: (request, call) => withJob(call, (job) => latitudesResult(workspace(), request, job)),
     spectrum: ({ open, grid, quantity }, call) =>
       withJob(call, (job) => spectrumResult(workspace(), open, grid, quantity, job)),
+    velocities: ({ open, grid }, call) => withJob(call, (job) => suppliedVelocity(workspace(), open, grid, job)),
     run: (request, call) => withJob(call, (job) => runStudy(workspace(), request, job)),
     save: async ({ open, path }) => {
       await writeFileWhole(path, `${JSON.stringify(studyFrom(open, dirname(path)), null, 2)}\n`);

@@ -1,9 +1,11 @@
 import type { FieldChoice, LatitudesResult, OpenStudy } from "../../core/contract/engine";
-import type { BandResponse, Plane } from "../../core/model/results";
+import type { BandResponse, FieldError, Plane } from "../../core/model/results";
+import { errorOfZonalMean } from "../../core/ocean/errors/mean-error";
 import { quantityById } from "../../core/ocean/quantities/evaluate";
 import { responseAt, timeFilter } from "../../core/study/band";
 import type { Background } from "../../core/study/band-plane";
 import { colourLimits } from "../../core/study/colour-limits";
+import { geometryOf } from "../../core/study/geometry";
 import { thinnedDates } from "../../core/study/latitude-time";
 import { meanProfile } from "../../core/study/profile";
 import type { HeightRecord } from "../../core/study/record";
@@ -90,7 +92,41 @@ export async function latitudesResult(
     limits,
     pictureLimits: colourLimits([series], quantityById(choice.quantity).signed),
     response: responseOf(open.study, filter, record),
+    error: await fieldError(workspace, request, stages, job),
   };
+}
+
+/** Quantities whose error is known, and the plane it comes from. */
+const errorSources = {
+  height: "height",
+  u: "u",
+  v: "v",
+  vorticity: "vorticity",
+  "rossby-number": "vorticity",
+} as const;
+
+/** Standard errors of the map and of its zonal means; null where the study or the quantity has none. */
+async function fieldError(
+  workspace: Workspace,
+  { open, grid, choice, dateIndex }: LatitudesRequest,
+  { record, filter }: FieldStages,
+  job: Job,
+): Promise<FieldError | null> {
+  const source = errorSources[choice.quantity as keyof typeof errorSources] as
+    | (typeof errorSources)["u" | "v" | "height" | "vorticity"]
+    | undefined;
+  const planes = source ? await workspace.errors(open, grid, job) : null;
+  if (!source || !planes) return null;
+  const { rows, columns } = record.cube;
+  const kept = filter?.row(record.hasData, dateIndex) ?? null;
+  const share = choice.inBand && kept ? Math.sqrt(kept.reduce((sum, weight) => sum + weight * weight, 0)) : 1;
+  const { coriolis } = geometryOf(record.axes, open.study.geostrophy);
+  const scaled = planes[source].map((error, cell) => {
+    const perF = choice.quantity === "rossby-number" ? Math.abs(coriolis[Math.floor(cell / columns)]) : 1;
+    return (share * error) / perF;
+  });
+  const { standardError } = errorOfZonalMean(scaled, record.axes, open.study.errors.correlationKm);
+  return { map: plane(scaled, rows, columns), onDate: standardError };
 }
 
 /** Latitude–time matrix of a field at the dates asked for: `series[row * at.length + i]`, NaN on dates without data. */

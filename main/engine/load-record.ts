@@ -16,6 +16,8 @@ export interface LoadedRecord {
   readonly index: GridIndex;
   readonly coverage: Float64Array;
   readonly masked: MaskCounts;
+  /** Where the record lies in the files: its date 0 is the first of `time`. */
+  readonly window: GridWindow;
   readonly bytes: number;
 }
 
@@ -67,7 +69,8 @@ export async function loadRecord(
     irregular,
     mean,
   };
-  return { record, index, coverage, masked, bytes };
+  const { latitude, longitude } = selected;
+  return { record, index, coverage, masked, window: { time: dates, latitude, longitude }, bytes };
 }
 
 function markMissingDates(

@@ -3,12 +3,14 @@ import { Fault } from "../../core/model/errors";
 import type { Background } from "../../core/study/band-plane";
 import type { ReductionTarget } from "../../core/study/reduction";
 import { type GridIndex, indexGrid } from "../readers/joined-grid";
+import { heightError } from "./height-error";
 import type { Job } from "./job";
 import { Kept } from "./kept";
 import { type LoadedRecord, loadRecord } from "./load-record";
 import { WorkerPool } from "./pool";
 import { fitBackgrounds, reduceRecord } from "./prepared";
 import { sourceFiles } from "./source-files";
+import type { TaskResult } from "./tasks";
 
 /** Where a study's stages live between calls: each is made once and kept until a study needs another. */
 export class Workspace {
@@ -17,6 +19,7 @@ export class Workspace {
   /** One at a time: records are large. */
   readonly #records = new Kept<LoadedRecord>(1);
   readonly #backgrounds = new Kept<Background>(2);
+  readonly #errors = new Kept<TaskResult<"errorPlanes">>(2);
   readonly #reductions = new Kept<ReductionTarget>(24);
 
   constructor(workers?: number) {
@@ -73,6 +76,28 @@ export class Workspace {
     return this.#reductions.get(
       JSON.stringify([recordKey(loaded.index, open), open.study.geostrophy, open.study.space, quantity]),
       () => reduceRecord(loaded, open.study, quantity, this.pool, job),
+      () => !job.cancelled,
+    );
+  }
+
+  /** Standard errors from the study's height error; null where it names none. */
+  async errors(open: OpenStudy, gridId: string, job: Job): Promise<TaskResult<"errorPlanes"> | null> {
+    const { geostrophy, errors } = open.study;
+    if (errors.heightMetres === null) return null;
+    const loaded = await this.record(open, gridId, job);
+    return this.#errors.get(
+      JSON.stringify([recordKey(loaded.index, open), geostrophy, errors]),
+      async () => {
+        const sigmaMetres = await heightError(open, loaded, this.pool, job);
+        const { correlationKm } = errors;
+        return job.step("Propagating the height's error", 1, () =>
+          this.pool.run(
+            "errorPlanes",
+            { record: loaded.record, geostrophy, sigmaMetres: sigmaMetres ?? 0, correlationKm },
+            job,
+          ),
+        );
+      },
       () => !job.cancelled,
     );
   }

@@ -44,6 +44,7 @@ const record: RecordOverview = {
   coverage: Float64Array.from(hasData, (has, date) => has * (0.9 + 0.1 * Math.sin(date / 9))),
   ocean,
   timeDeviationDays: 0,
+  blendedRows: new Uint8Array(rows),
   cautions: [{ id: "land", text: "2.1 % of cells lie within 50 km of land and are left out." }],
   bytes: 4 * rows * columns * dates,
 };
@@ -137,9 +138,11 @@ export function standInEngine(calls: string[] = []): Engine {
         filterEnd: Uint8Array.from({ length: dates }, (_, date) => (date < 40 || date > dates - 40 ? 1 : 0)),
         limits: [-0.16, 0.16],
         pictureLimits: [-0.1, 0.1],
+        error: null,
         response: { ...response(study.band), halfWidthSteps: 40, daysLostEachEnd: 120 },
       };
     },
+    velocities: async () => null,
     async spectrum({ quantity }) {
       await pause(20);
       const frequency = Float64Array.from({ length: 150 }, (_, i) => (i + 1) / (dates * stepDays));

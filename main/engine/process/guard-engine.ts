@@ -77,6 +77,8 @@ export function guardEngine(engine: Engine, grants: Grants): Engine {
       engine.latitudes({ ...request, open: await checkedStudy(request.open) }, options),
     spectrum: async (request, options) =>
       engine.spectrum({ ...request, open: await checkedStudy(request.open) }, options),
+    velocities: async (request, options) =>
+      engine.velocities({ ...request, open: await checkedStudy(request.open) }, options),
     run: async (request, options) => {
       const folder = await grants.writable(request.folder);
       return engine.run({ ...request, folder, open: await checkedStudy(request.open) }, options);

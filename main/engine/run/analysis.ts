@@ -1,5 +1,5 @@
 import type { OpenStudy } from "../../../core/contract/engine";
-import type { Profile, SpectrumResult } from "../../../core/model/results";
+import type { Profile, SpectrumResult, SuppliedVelocityReport } from "../../../core/model/results";
 import { quantities } from "../../../core/ocean/quantities/index";
 import { meanProfile } from "../../../core/study/profile";
 import type { Job } from "../job";
@@ -7,6 +7,8 @@ import { type FieldStages, fieldArguments, fieldStages, pictureSeries, type Quan
 import type { LoadedRecord } from "../load-record";
 import type { WorkerPool } from "../pool";
 import { spectrumResult } from "../spectrum";
+import { suppliedVelocity } from "../supplied-velocity";
+import type { TaskResult } from "../tasks";
 import type { FieldArguments } from "../tasks/field";
 import { addMoments, type Moments } from "../tasks/moments";
 import type { Workspace } from "../workspace";
@@ -34,6 +36,10 @@ export interface Analysis {
   readonly moments: Moments;
   /** null for a study without a band. */
   readonly band: { readonly zonal: ZonalAnalysis; readonly moments: Moments } | null;
+  /** Standard errors from the study's height error; null where it names none. */
+  readonly errors: TaskResult<"errorPlanes"> | null;
+  /** null where the files supply no velocity. */
+  readonly supplied: SuppliedVelocityReport | null;
   /** null where the record is too short or irregular for one. */
   readonly spectrum: SpectrumResult | null;
 }
@@ -60,6 +66,8 @@ export async function analyse(workspace: Workspace, open: OpenStudy, job: Job): 
           moments: await momentsOf(pool, banded, "Averaging maps in the band", job),
         }
       : null,
+    errors: await workspace.errors(open, grid, job),
+    supplied: await suppliedVelocity(workspace, open, grid, job),
     spectrum: hasBand ? await spectrumResult(workspace, open, grid, "u", job) : null,
   };
 }

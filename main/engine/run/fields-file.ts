@@ -1,3 +1,4 @@
+import { bandWords } from "../../../core/study/band-words";
 import { type NetcdfVariable, writeNetcdf4 } from "../../writers/netcdf4";
 import type { Job } from "../job";
 import { fieldArguments } from "../latitudes";
@@ -44,6 +45,7 @@ export async function writeFields(path: string, analysis: Analysis, pool: Worker
       coordinate("latitude", latitude.values, latitudeAttributes),
       coordinate("longitude", longitude.values, longitudeAttributes),
       ...variables,
+      ...errorVariables(analysis),
     ],
     attributes: globalAttributes(analysis, "Geostrophic fields"),
   });
@@ -68,7 +70,7 @@ function field(
   const quantity = mappedQuantities[q];
   const { rows, columns } = analysis.stages.record.cube;
   const { band } = analysis.open.study;
-  const bandText = `${quantity.title.toLowerCase()}, periods of ${band.shortestDays} to ${band.longestDays} days`;
+  const bandText = `${quantity.title.toLowerCase()}, ${bandWords(band)}`;
   const { reference } = analysis.loaded.index.height;
   const described = variableAttributes(quantity, reference, cellMethods ? { cell_methods: cellMethods } : {});
   const { standard_name: _, ...withoutName } = described;
@@ -83,6 +85,32 @@ function field(
     chunks: [1, rows, columns],
     gzipLevel,
   };
+}
+
+/** Standard errors of single maps as they stand, the same for every date. */
+function errorVariables({ errors, stages, loaded, open }: Analysis): NetcdfVariable[] {
+  if (!errors) return [];
+  const { rows, columns } = stages.record.cube;
+  const { heightMetres, correlationKm } = open.study.errors;
+  return mappedQuantities.map((quantity) => {
+    const { standard_name: name, ...described } = variableAttributes(quantity, loaded.index.height.reference, {
+      comment: `from a height error of ${heightMetres === "file" ? "the files' own" : `${heightMetres} m`}, correlated over ${correlationKm} km; what the mapping smoothed away is no part of it`,
+    });
+    return {
+      name: `${quantity.variable}_error`,
+      type: "float32",
+      dimensions: ["latitude", "longitude"],
+      values: Float32Array.from(errors[quantity.id as keyof typeof errors]),
+      attributes: {
+        ...described,
+        ...(name ? { standard_name: `${name} standard_error` } : {}),
+        long_name: `standard error of ${quantity.title.toLowerCase()}`,
+      },
+      fillValue: Number.NaN,
+      chunks: [rows, columns],
+      gzipLevel,
+    };
+  });
 }
 
 function overTime(analysis: Analysis): NetcdfVariable[] {

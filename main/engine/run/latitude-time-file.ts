@@ -1,5 +1,6 @@
 import { quantityById } from "../../../core/ocean/quantities/evaluate";
 import { bridgedDates } from "../../../core/study/band";
+import { bandWords } from "../../../core/study/band-words";
 import { type NetcdfVariable, writeNetcdf4 } from "../../writers/netcdf4";
 import type { Analysis } from "./analysis";
 import { globalAttributes, latitudeAttributes, timeAttributes, variableAttributes } from "./cf-attributes";
@@ -10,7 +11,6 @@ export async function writeLatitudeTime(path: string, analysis: Analysis): Promi
   const { rows, dates } = record.cube;
   const u = quantityById("u");
   const { reference } = analysis.loaded.index.height;
-  const { shortestDays, longestDays } = analysis.open.study.band;
   const zonal = (name: string, series: Float64Array, longName: string, isWhole: boolean): NetcdfVariable => {
     const { standard_name: standardName, ...rest } = variableAttributes(u, reference, {
       cell_methods: "longitude: mean",
@@ -55,7 +55,7 @@ export async function writeLatitudeTime(path: string, analysis: Analysis): Promi
             zonal(
               "u_band",
               analysis.band.zonal.series,
-              `zonal mean of eastward velocity, periods of ${shortestDays} to ${longestDays} days`,
+              `zonal mean of eastward velocity, ${bandWords(analysis.open.study.band)}`,
               false,
             ),
           ]

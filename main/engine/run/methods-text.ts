@@ -1,5 +1,6 @@
 import { formatDay } from "../../../core/model/calendar";
 import { crossingDays } from "../../../core/study/band";
+import { bandWords } from "../../../core/study/band-words";
 import { cautionsFor } from "../../../core/study/cautions";
 import { leastZonalCoverage } from "../../../core/study/reduction";
 import type { Study } from "../../../core/study/schema";
@@ -18,6 +19,8 @@ export function methodsText(analysis: Analysis): string {
     "",
     geostrophyText(study),
     "",
+    ...spaceText(study),
+    ...errorText(study),
     backgroundText(study, analysis),
     "",
     bandText(study, analysis),
@@ -57,7 +60,8 @@ function dataText({ loaded, stages, grid }: Analysis): string {
   );
 }
 
-function geostrophyText({ geostrophy }: Study): string {
+function geostrophyText(study: Study): string {
+  const { geostrophy } = study;
   const earth =
     geostrophy.earth === "ellipsoid" ? "the WGS-84 ellipsoid" : `a sphere of radius ${geostrophy.radius / 1000} km`;
   const gravity =
@@ -66,10 +70,50 @@ function geostrophyText({ geostrophy }: Study): string {
       : `gravity ${geostrophy.gravity} m s⁻²`;
   return (
     `Geostrophic velocity is the slope of height by ${geostrophy.stencil}-point centred differences (Fornberg 1988) on ${earth}, ` +
-    `with ${gravity} and a rotation rate of ${geostrophy.omega} rad s⁻¹. Beside gaps, land and the region's edge the stencil narrows ` +
-    `symmetrically, then becomes one-sided of second order. Rows within ${geostrophy.equatorDegrees}° of the equator are blank. ` +
+    `with ${gravity} and a rotation rate of ${(geostrophy.omega * 1e5).toFixed(6)} × 10⁻⁵ rad s⁻¹. Beside gaps, land and the region's edge the stencil narrows ` +
+    `symmetrically, then becomes one-sided of second order. ${equatorText(study)} ` +
     "Relative vorticity is the curl on the same earth, the convergence of meridians included."
   );
+}
+
+function equatorText({ geostrophy }: Study): string {
+  const { equator, equatorDegrees, blendScaleDegrees, blendWidthDegrees } = geostrophy;
+  if (equator === "blank") return `Rows within ${equatorDegrees}° of the equator are blank.`;
+  return (
+    `Near the equator velocity is blended with a beta-plane solution (Lagerloef et al. 1999): weight exp[−(φ/${blendScaleDegrees}°)²], ` +
+    `from a cubic fit of the height's slope within ${blendWidthDegrees}°.`
+  );
+}
+
+function spaceText({ space }: Study): string[] {
+  const parts: string[] = [];
+  const words = (band: NonNullable<Study["space"]["zonal"]>) =>
+    [
+      band.shortestKm === null ? "" : `over ${band.shortestKm} km`,
+      band.longestKm === null ? "" : `under ${band.longestKm} km`,
+    ]
+      .filter(Boolean)
+      .join(" and ");
+  if (space.removeSurface) {
+    const { zonalKm, meridionalKm } = space.removeSurface;
+    parts.push(
+      `a large-scale loess surface of half-spans ${zonalKm} km (zonal) and ${meridionalKm} km (meridional) was taken off`,
+    );
+  }
+  if (space.removeZonalMean) parts.push("each row's zonal mean was taken off");
+  if (space.zonal) parts.push(`zonal wavelengths ${words(space.zonal)} were kept`);
+  if (space.meridional) parts.push(`meridional wavelengths ${words(space.meridional)} were kept`);
+  return parts.length > 0 ? [`Of every height map, before differencing, ${listed(parts)}.`, ""] : [];
+}
+
+function errorText({ errors }: Study): string[] {
+  if (errors.heightMetres === null) return [];
+  const size = errors.heightMetres === "file" ? "the files' own error" : `a height error of ${errors.heightMetres} m`;
+  const reach = errors.correlationKm === 0 ? "independent between cells" : `correlated over ${errors.correlationKm} km`;
+  return [
+    `Standard errors of velocity and vorticity are propagated from ${size}, ${reach}, through the weights used at each cell.`,
+    "",
+  ];
 }
 
 function backgroundText({ background }: Study, { stages }: Analysis): string {
@@ -98,7 +142,7 @@ function bandText({ band }: Study, { stages }: Analysis): string {
     "running-mean": "running means",
   } as const;
   return (
-    `${keptText(band)} by ${kinds[band.filter]}; its response is one half in amplitude at ${periods(0.5)} days and one half in power ` +
+    `${capitalised(bandWords(band))} were kept by ${kinds[band.filter]}; its response is one half in amplitude at ${periods(0.5)} days and one half in power ` +
     `at ${periods(Math.SQRT1_2)} days. Gaps of up to ${band.bridgeDays} days are bridged ` +
     `(${band.filter === "lanczos" ? "missing dates get no weight and the weights left are scaled to the same sum" : band.filter === "butterworth" ? "by straight lines" : "a missing date is left out with the one opposite"}); ` +
     "the filter does not reach across longer ones. Dates without data stay blank. Values that rest on less than 90 % of the filter's weight, " +
@@ -107,22 +151,23 @@ function bandText({ band }: Study, { stages }: Analysis): string {
   );
 }
 
-function keptText({ shortestDays, longestDays }: Study["band"]): string {
-  if (shortestDays === null) return `Periods below ${longestDays} days were kept`;
-  if (longestDays === null) return `Periods above ${shortestDays} days were kept`;
-  return `Periods of ${shortestDays} to ${longestDays} days were kept`;
-}
-
 function references({ geostrophy, band }: Study): string[] {
   return [
     "Bretherton, C. S., et al. (1999). J. Climate 12, 1990–2009.",
     ...(band.filter === "lanczos" ? ["Duchon, C. E. (1979). J. Appl. Meteor. 18, 1016–1022."] : []),
     "Fornberg, B. (1988). Math. Comp. 51, 699–706.",
+    ...(geostrophy.equator === "blend"
+      ? ["Lagerloef, G. S. E., et al. (1999). J. Geophys. Res. 104, 23313–23326."]
+      : []),
     ...(geostrophy.gravity === "latitude"
       ? ["IOC, SCOR and IAPSO (2010). The international thermodynamic equation of seawater – 2010. UNESCO."]
       : []),
     "Leith, C. E. (1973). J. Appl. Meteor. 12, 1066–1069.",
   ];
+}
+
+function capitalised(text: string): string {
+  return text.charAt(0).toUpperCase() + text.slice(1);
 }
 
 function listed(words: readonly string[]): string {

@@ -47,6 +47,8 @@ export function summaryOf(analysis: Analysis, inputs: readonly InputFile[], file
     },
     headline: headlineOf(analysis),
     filter: filterOf(analysis),
+    errors: errorsOf(analysis),
+    suppliedVelocity: suppliedOf(analysis),
     cautions: cautionsFor(open.study, record),
     files,
   };
@@ -103,6 +105,43 @@ function filterOf({ stages, open }: Analysis): object | null {
     lostAtEachEnd: number(daysLost(filter, cube.dates, time.step), "days"),
     markedDates: countOnes(filter.ends(hasData)),
     bridgedDates: countOnes(bridgedDates(open.study.band, record)),
+  };
+}
+
+/** Area means of the standard errors that the height's error leads to. */
+function errorsOf({ errors, stages, open }: Analysis): object | null {
+  if (!errors) return null;
+  const { rows, columns } = stages.record.cube;
+  const { values } = stages.record.axes.latitude;
+  const typical = (plane: Float64Array) => {
+    let [squares, weight] = [0, 0];
+    for (let cell = 0; cell < rows * columns; cell++) {
+      if (Number.isNaN(plane[cell])) continue;
+      const area = Math.cos((values[Math.floor(cell / columns)] * Math.PI) / 180);
+      squares += area * plane[cell] * plane[cell];
+      weight += area;
+    }
+    return Math.sqrt(squares / weight);
+  };
+  return {
+    height: number(typical(errors.height), "m"),
+    u: number(typical(errors.u), "m s-1"),
+    v: number(typical(errors.v), "m s-1"),
+    vorticity: number(typical(errors.vorticity), "s-1"),
+    correlation: number(open.study.errors.correlationKm, "km"),
+  };
+}
+
+/** The supplied velocity's agreement with ours; the best of the offered conventions and the study's own first. */
+function suppliedOf({ supplied }: Analysis): object | null {
+  if (!supplied) return null;
+  const { agreement, conventions, ...named } = supplied;
+  return {
+    ...named,
+    unit: "m s-1",
+    agreement,
+    bestConvention: conventions[0] ?? null,
+    conventions: conventions.slice(0, 6),
   };
 }
 

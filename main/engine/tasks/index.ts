@@ -1,5 +1,6 @@
 import type { JobFlags } from "../job";
 import { backgroundTask } from "./background";
+import { errorPlanesTask } from "./error-planes";
 import { fieldPlanesTask } from "./field-planes";
 import { limitsTask } from "./limits";
 import { mapTask } from "./map";
@@ -7,7 +8,9 @@ import { momentsTask } from "./moments";
 import { pictureTask } from "./picture";
 import { readTask } from "./read";
 import { reduceTask } from "./reduce";
+import { rmsPlaneTask } from "./rms-plane";
 import { spectrumTask } from "./spectrum";
+import { velocitiesTask } from "./velocities";
 import { zonalBandTask } from "./zonal-band";
 
 /** Everything a worker can be asked to do: one file a task, one line here. */
@@ -22,6 +25,9 @@ export const tasks = {
   spectrum: spectrumTask,
   moments: momentsTask,
   fieldPlanes: fieldPlanesTask,
+  errorPlanes: errorPlanesTask,
+  rmsPlane: rmsPlaneTask,
+  velocities: velocitiesTask,
 } satisfies Record<string, (args: never, job: JobFlags) => unknown>;
 
 export type TaskName = keyof typeof tasks;

@@ -26,6 +26,7 @@ export function standInLatitudes(): LatitudesResult {
     filterEnd: Uint8Array.of(0, 1, 255),
     limits: [-0.5, 0.5],
     pictureLimits: [-0.25, 0.25],
+    error: null,
     response: {
       frequency: Float64Array.of(0.1),
       amplitude: Float64Array.of(1),
@@ -101,6 +102,7 @@ export function createStandIn(steps = 3): StandIn {
       return standInLatitudes();
     },
     spectrum: async ({ quantity }) => ({ quantity }) as never,
+    velocities: async () => null,
     run: async (_request, options) => {
       note("run");
       return untilCancelled(options).finally(() => {
