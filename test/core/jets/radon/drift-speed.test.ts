@@ -80,3 +80,12 @@ test("bootstrap limits hold the true speed for at least 90 of 100 noisy records"
 
   expect(held).toBeGreaterThanOrEqual(90);
 });
+
+test("nothing that varies, or too few rows, gives no speed", () => {
+  const whole = wave(400, 0.02, 0, 1);
+  for (const value of [0, 3, Number.NaN]) {
+    expect(driftSpeed({ ...whole, values: whole.values.map(() => value) }, settings).speed).toBeNaN();
+  }
+  const thin = { ...whole, values: whole.values.slice(0, 360), positionMetres: whole.positionMetres.slice(0, 2) };
+  expect(driftSpeed(thin, settings)).toMatchObject({ speed: Number.NaN, low95: Number.NaN });
+});
