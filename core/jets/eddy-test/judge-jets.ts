@@ -45,7 +45,7 @@ export function neighbourhoodDegrees(
  * spacing and in its direction, a jet of its score or more, itself counted in. Corrected over the jets by Benjamini &
  * Hochberg; a neighbourhood is one test, its highest-scoring jet standing for it, and every jet with p under the threshold
  * the tests set is held. In eddies alone 5 % of the leading jets have p up to 0.05, and the chance that any jet is held is
- * `level` or a little less.
+ * about `level`.
  * Errors: Fault (tag "study") with no oceans or a neighbourhood that is not positive.
  */
 export function judgeJets(

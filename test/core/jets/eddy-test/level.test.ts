@@ -28,7 +28,7 @@ const halfSpacingDegrees = neighbourhoodDegrees(Number.NaN, oceans, 15);
 const settings = { halfSpacingDegrees, level: 0.05 };
 
 describe("the level of the eddy test", () => {
-  test("of 1,000 records of eddies alone 5 % of the leading jets have p <= 0.05, and no more than 5 % have any jet held", () => {
+  test("of 1,000 records of eddies alone 5 % of the leading jets have p <= 0.05, and about 5 % have any jet held", () => {
     const records = eddyTestRange(plan, chain, { from: 2000, to: 3000, seed: 5 });
     let [leading, below, anyHeld] = [0, 0, 0];
     for (const { jets } of records) {
