@@ -11,6 +11,9 @@ const known: Readonly<Record<string, DisplayUnits>> = {
   "m s-1": { scale: 100, units: "cm s⁻¹", squared: "cm² s⁻²" },
   m: { scale: 100, units: "cm", squared: "cm²" },
   "s-1": { scale: 1e6, units: "10⁻⁶ s⁻¹", squared: "10⁻¹² s⁻²" },
+  "s-2": { scale: 1e12, units: "10⁻¹² s⁻²", squared: "10⁻²⁴ s⁻⁴" },
+  "m-1": { scale: 1e12, units: "10⁻¹² m⁻¹", squared: "10⁻²⁴ m⁻²" },
+  "m-1 s-1": { scale: 1e12, units: "10⁻¹² m⁻¹ s⁻¹", squared: "10⁻²⁴ m⁻² s⁻²" },
   "m2 s-2": { scale: 1e4, units: "cm² s⁻²", squared: "cm⁴ s⁻⁴" },
   "1": { scale: 1, units: "", squared: "" },
 };

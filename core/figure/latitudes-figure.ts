@@ -2,7 +2,7 @@ import { paper, type Theme } from "./colour/theme";
 import { displayUnits } from "./display-units";
 import type { FigureDefinition } from "./figure-definition";
 import { colourKeyMarks, limitLabels } from "./latitudes/colour-key";
-import { daysMarks, daysPanel } from "./latitudes/days-panel";
+import { bridgedDates, daysMarks, daysPanel } from "./latitudes/days-panel";
 import {
   inlineHeadingMarks,
   mapHeading,
@@ -15,7 +15,7 @@ import type { FigureSize, LatitudesInput } from "./latitudes/input";
 import { latitudeTimeMarks, latitudeTimePanel } from "./latitudes/latitude-time-panel";
 import { type LatitudesLayout, latitudesLayout } from "./latitudes/layout";
 import { latitudeScale, mapMarks, mapPanel } from "./latitudes/map-panel";
-import { noteMarks } from "./latitudes/notes";
+import { noteMarks, remarkTexts } from "./latitudes/notes";
 import { spectrumMarks, spectrumPanel, varianceTicks } from "./latitudes/spectrum-panel";
 import { zonalMeanMarks, zonalMeanPanel } from "./latitudes/zonal-mean-panel";
 import type { Mark, PanelFrame, Scene } from "./scene";
@@ -105,7 +105,13 @@ function lowerMarks(
         "days",
         place(days),
         "Days with data",
-        ["gaps in red, shaded ends lose the long periods", "gaps in red, filter ends shaded", "gaps in red"],
+        bridgedDates(input).includes(1)
+          ? [
+              "gaps in red, low where the filter bridges them, its ends shaded",
+              "gaps in red, low if bridged",
+              "gaps in red",
+            ]
+          : ["gaps in red, shaded ends lose the long periods", "gaps in red, filter ends shaded", "gaps in red"],
         theme,
         sizes,
       ),
@@ -127,8 +133,13 @@ function description(input: LatitudesInput): string {
   return (
     `${mapHeading(input)}, ${input.region}: a map, the zonal mean over ${first} to ${last} with its 95 % band, ` +
     `and the zonal mean through time on one latitude axis; ${periodsText(input)}. ` +
-    `Colours run from ${lower} to ${upper}${unitText} on the map, from ${pictureLower} to ${pictureUpper}${unitText} through time. ${input.grid}.`
+    `Colours run from ${lower} to ${upper}${unitText} on the map, from ${pictureLower} to ${pictureUpper}${unitText} through time. ` +
+    [...remarkTexts(input), input.grid].map((remark) => `${capital(remark)}.`).join(" ")
   );
+}
+
+function capital(text: string): string {
+  return text.charAt(0).toUpperCase() + text.slice(1);
 }
 
 export const latitudesFigure: FigureDefinition<"latitudes", LatitudesInput, FigureSize> = {

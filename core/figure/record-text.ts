@@ -20,3 +20,17 @@ export function gridText(name: string, { latitude, time }: Pick<RecordAxes, "lat
   if (days > 0) parts.push(`${formatSignificant(days, 3)} d`);
   return parts.join(" · ");
 }
+
+/** What standard errors come from: "a 2 cm height error", "the file's own height error", with the distance it is alike over. */
+export function errorSourceText(settings: {
+  readonly heightMetres: number | "file" | null;
+  readonly correlationKm: number;
+}): string {
+  const { heightMetres, correlationKm } = settings;
+  if (heightMetres === null) return "no height error";
+  const error =
+    heightMetres === "file"
+      ? "the file’s own height error"
+      : `a ${formatSignificant(100 * heightMetres, 3)} cm height error`;
+  return correlationKm > 0 ? `${error} alike over ${formatSignificant(correlationKm, 4)} km` : error;
+}

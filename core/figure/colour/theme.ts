@@ -30,6 +30,8 @@ export interface Theme {
   readonly weakened: string;
   /** No value on this date. */
   readonly missing: string;
+  /** Fine lines over values that lie within their error. */
+  readonly hatch: string;
   /** Never a value. */
   readonly land: string;
   readonly diverging: ColourMap;
@@ -53,6 +55,7 @@ export const paper: Theme = {
   data: "#cdd5d3",
   weakened: "#a9b2b3",
   missing: "#dfdcd4",
+  hatch: "#8f979a",
   land: "#bdb8ac",
   diverging: rustTealPaper,
   sequential: inkPaper,
@@ -75,6 +78,7 @@ export const night: Theme = {
   data: "#3f4c52",
   weakened: "#67757b",
   missing: "#3b4046",
+  hatch: "#6b7881",
   land: "#5a5e61",
   diverging: rustTealNight,
   sequential: inkNight,

@@ -3,7 +3,8 @@ import { linePath, pathMark, rectanglePath } from "../marks";
 import { pixelX } from "../panel";
 import type { Mark, PanelFrame } from "../scene";
 import { dataWidth, frameMark, groundMark } from "./axis-marks";
-import type { LatitudesInput } from "./input";
+import { bridgedGaps } from "./bridged-gaps";
+import { isFiltered, type LatitudesInput } from "./input";
 import { timeScale } from "./latitude-time-panel";
 import type { Box } from "./layout";
 
@@ -20,17 +21,30 @@ export function daysPanel(input: LatitudesInput, box: Box): PanelFrame {
   };
 }
 
-/** Coverage by date as a grey area; filter ends shaded; dates without data in red-brown; the map's date in amber. */
+/** Gaps that the filter bridges take up this share of the strip, at its foot. */
+const bridgedShare = 0.4;
+
+/** 1 on dates in gaps that the filter bridges; none where the values shown went through no filter. */
+export function bridgedDates(input: LatitudesInput): Uint8Array {
+  const { hasData, time } = input.record;
+  return bridgedGaps(hasData, Math.abs(time.step), isFiltered(input) ? (input.band.bridgeDays ?? 0) : 0);
+}
+
+/**
+ * Coverage by date as a grey area; filter ends shaded; dates without data in red-brown, low where the gap is bridged; the
+ * map's date in amber.
+ */
 export function daysMarks(input: LatitudesInput, panel: PanelFrame, theme: Theme): Mark[] {
   const { hasData, coverage, time } = input.record;
   const { filterEnd, dateIndex } = input.result;
   const { y, height } = panel;
-  const rectangles = (test: (date: number) => boolean, least: number) =>
+  const bridged = bridgedDates(input);
+  const rectangles = (test: (date: number) => boolean, least: number, share = 1) =>
     dateRuns(panel, input, test)
       .map(([left, right]) => {
         const width = Math.max(least, right - left);
         const x = Math.min(left, panel.x + panel.width - width);
-        return rectanglePath(x, y, width, height);
+        return rectanglePath(x, y + (1 - share) * height, width, share * height);
       })
       .join("");
   const x = pixelX(panel, time.values[dateIndex]);
@@ -44,7 +58,12 @@ export function daysMarks(input: LatitudesInput, panel: PanelFrame, theme: Theme
     ),
     pathMark(
       "days-gaps",
-      rectangles((date) => hasData[date] === 0, leastGapPixels),
+      rectangles((date) => hasData[date] === 0 && bridged[date] === 0, leastGapPixels),
+      { fill: theme.gap, clip: panel.id },
+    ),
+    pathMark(
+      "days-bridged",
+      rectangles((date) => bridged[date] === 1, leastGapPixels, bridgedShare),
       { fill: theme.gap, clip: panel.id },
     ),
     frameMark(panel, theme),

@@ -1,5 +1,5 @@
 import type { Axis, TimeAxis } from "../../model/axis";
-import type { BandResponse, Plane, Profile, SpectrumResult } from "../../model/results";
+import type { BandResponse, FieldError, Plane, Profile, SpectrumResult } from "../../model/results";
 
 /** What the figure of the latitude row is drawn from. SI units throughout. */
 export interface LatitudesInput {
@@ -7,6 +7,8 @@ export interface LatitudesInput {
   readonly result: LatitudesValues;
   /** Left out: the period panel shows the band and its response alone. */
   readonly spectrum?: Pick<SpectrumResult, "frequency" | "density">;
+  /** Why there is no spectrum, in a sentence for its panel. */
+  readonly spectrumNote?: string;
   readonly quantity: {
     readonly title: string;
     /** SI units as CF writes them. */
@@ -19,7 +21,13 @@ export interface LatitudesInput {
     readonly shortestDays: number | null;
     readonly longestDays: number | null;
     readonly filter: string;
+    /** Butterworth only. */
+    readonly order?: number;
+    /** Gaps up to this long are bridged, and drawn as such. Left out: none is. */
+    readonly bridgeDays?: number;
   };
+  /** What the standard errors come from, "a 2 cm height error"; wanted where the result has errors. */
+  readonly errorSource?: string;
   /** "20–41° N, 150–125° W". */
   readonly region: string;
   /** "Grid A · 0.125° · 3 d". */
@@ -39,6 +47,8 @@ export interface RecordAxes {
   readonly coverage: Float64Array;
   /** 1 for cells that ever hold a value; row-major latitude × longitude. */
   readonly ocean: Uint8Array;
+  /** 1 on rows whose velocities come from a blend across the equator; drawn as a bracket. */
+  readonly blendedRows?: Uint8Array;
 }
 
 /** Fields and profiles of one quantity, date and band. */
@@ -57,6 +67,8 @@ export interface LatitudesValues {
   /** Colour limits of the latitude-time picture. */
   readonly pictureLimits: readonly [lower: number, upper: number];
   readonly response: Pick<BandResponse, "frequency" | "amplitude" | "daysLostEachEnd">;
+  /** Standard errors of the map and of its zonal mean: hatched and banded where given. */
+  readonly error?: Pick<FieldError, "map" | "onDate"> | null;
 }
 
 /** Room for a figure in CSS pixels. */
@@ -72,4 +84,16 @@ export interface FigureSize {
 /** Whether values shown went through the study's band. */
 export function isFiltered(input: LatitudesInput): boolean {
   return input.result.choice.inBand && input.band.filter !== "none";
+}
+
+const filterNames: Readonly<Record<string, string>> = {
+  lanczos: "Lanczos filter",
+  butterworth: "Butterworth filter",
+  "running-mean": "running mean",
+};
+
+/** The band's filter in words: "Lanczos filter", "Butterworth filter of order 4". */
+export function filterName({ filter, order }: LatitudesInput["band"]): string {
+  const name = filterNames[filter] ?? "filter";
+  return filter === "butterworth" && order !== undefined ? `${name} of order ${order}` : name;
 }

@@ -1,11 +1,14 @@
 import { paint } from "../colour/paint";
 import type { Theme } from "../colour/theme";
-import { rasterMark } from "../marks";
+import { pathMark, rasterMark } from "../marks";
 import { cellEdges, gatherCells, nearestCells } from "../resample";
 import type { Mark, PanelFrame } from "../scene";
 import { longitudeTicks, type Tick } from "../ticks";
-import { bottomTickMarks, frameMark, leftTickMarks, roomiestTicks } from "./axis-marks";
+import { bottomTickMarks, frameMark, hairWidth, leftTickMarks, roomiestTicks } from "./axis-marks";
+import { blendMarks } from "./blend-bracket";
 import { colourMapOf } from "./colour-key";
+import { doubtfulCells } from "./doubtful-cells";
+import { hatchPath } from "./hatch";
 import type { LatitudesInput } from "./input";
 import type { LatitudesLayout } from "./layout";
 
@@ -45,7 +48,10 @@ function rasterCells(
   return nearestCells(axis.values, scale.from, scale.to, count);
 }
 
-/** The map on the date: sharp cells, land and missing values in their own greys. */
+/** Distance of hatch lines along a row, in small type sizes: close enough for a lone cell, far enough to see the colour. */
+const hatchSpacing = 0.5;
+
+/** The map on the date: sharp cells, land and missing values in their own greys, values within their error hatched. */
 export function mapMarks(
   input: LatitudesInput,
   layout: LatitudesLayout,
@@ -67,10 +73,19 @@ export function mapMarks(
     1.5 * layout.sizes.small,
   );
   const within = [0, panel.x + panel.width + layout.panelGap / 2] as const;
+  const { error } = input.result;
+  const marked = error
+    ? Uint8Array.from(gatherCells(doubtfulCells(map, error.map), map.columns, rows, columns))
+    : new Uint8Array(0);
+  const hatch = hatchPath(marked, columns.length, panel, hatchSpacing * layout.sizes.small);
   return [
     rasterMark("map-raster", panel, columns.length, rows.length, pixels),
+    ...(hatch === ""
+      ? []
+      : [pathMark("map-doubt", hatch, { stroke: theme.hatch, strokeWidth: hairWidth, clip: panel.id })]),
     frameMark(panel, theme),
     ...leftTickMarks(panel, latitudeTicks, theme, layout.sizes),
+    ...blendMarks(input.record, panel, theme),
     ...bottomTickMarks(panel, ticks, within, theme, layout.sizes),
   ];
 }

@@ -4,7 +4,9 @@ import { linePath, pathMark, rectanglePath, textMark } from "../marks";
 import type { Mark, PanelFrame } from "../scene";
 import { fittingText, textWidth } from "../text-width";
 import { dataWidth } from "./axis-marks";
-import { isFiltered, type LatitudesInput } from "./input";
+import { hasBlend } from "./blend-bracket";
+import { errorsWithin95 } from "./doubtful-cells";
+import { filterName, isFiltered, type LatitudesInput } from "./input";
 import type { TypeSizes } from "./layout";
 
 const lineShare = 1.6;
@@ -24,19 +26,53 @@ export function noteMarks(
   const step = lineShare * small;
   const first = days.y + days.height + 1.9 * small;
   const room = Math.max(0, Math.floor((bottom - first) / step) + 1);
-  const texts = [
-    [dataText(input), dataCountText(input)],
-    [`${input.grid} · ${input.region}`, input.region],
-  ];
-  // With little room the counts and the source matter more than the legend.
+  const texts = noteTexts(input);
+  // With little room the words matter more than the legend.
   const showsLegend = room > texts.length;
   const marks = showsLegend ? legendMarks(input, days, first, theme, sizes) : [];
-  for (const [line, candidates] of texts.slice(0, room).entries()) {
+  for (const [line, { id, candidates }] of texts.slice(0, room).entries()) {
     const base = first + (line + (showsLegend ? 1 : 0)) * step;
     const style = { size: small, fill: theme.softInk };
-    marks.push(textMark(`note-${line}`, days.x, base, fittingText(candidates, days.width, small), style));
+    marks.push(textMark(`note-${id}`, days.x, base, fittingText(candidates, days.width, small), style));
   }
   return marks;
+}
+
+interface Note {
+  readonly id: string;
+  /** The longest first. */
+  readonly candidates: readonly string[];
+}
+
+/** What the reader must know first comes first: a sign that is not explained is worse than a missing count. */
+function noteTexts(input: LatitudesInput): Note[] {
+  return [
+    ...remarks(input),
+    { id: "data", candidates: [dataText(input), dataCountText(input)] },
+    { id: "source", candidates: [`${input.grid} · ${input.region}`, input.region] },
+  ];
+}
+
+/** What the hatch and the bracket on the map mean, each where it is drawn. */
+function remarks({ record, result, errorSource }: LatitudesInput): Note[] {
+  const notes: Note[] = [];
+  if (result.error) {
+    const under = `hatched: below ${errorsWithin95} standard errors`;
+    const source = errorSource ? [`${under} of ${errorSource}`] : [];
+    notes.push({ id: "doubt", candidates: [...source, under, "hatched: within its error"] });
+  }
+  if (hasBlend(record)) {
+    notes.push({
+      id: "blend",
+      candidates: ["rows with a bracket: blended across the equator", "bracket: blended rows", "bracket: blended"],
+    });
+  }
+  return notes;
+}
+
+/** The remarks in full, for those who cannot see the signs they explain. */
+export function remarkTexts(input: LatitudesInput): string[] {
+  return remarks(input).map(({ candidates }) => candidates[0]);
 }
 
 function dataCountText({ record }: LatitudesInput): string {
@@ -47,7 +83,7 @@ function dataCountText({ record }: LatitudesInput): string {
 function dataText(input: LatitudesInput): string {
   if (!isFiltered(input)) return dataCountText(input);
   const lost = formatNumber(input.result.response.daysLostEachEnd, 0);
-  return `${dataCountText(input)}, the filter weakens ${lost} days at each end`;
+  return `${dataCountText(input)}, the ${filterName(input.band)} weakens ${lost} days at each end`;
 }
 
 /** Swatches with their words, left to right; those that do not fit are left out. */

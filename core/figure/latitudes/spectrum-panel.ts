@@ -4,7 +4,7 @@ import { formatSignificant } from "../format";
 import { linePath, pathMark, polylinePath, rectanglePath, textMark } from "../marks";
 import { pixelX, pixelY } from "../panel";
 import type { Mark, PanelFrame } from "../scene";
-import { textWidth } from "../text-width";
+import { fittingText, textWidth } from "../text-width";
 import { linearTicks, periodTicks, type Tick } from "../ticks";
 import { bottomTickMarks, dataWidth, frameMark, groundMark, leftTickMarks } from "./axis-marks";
 import type { LatitudesInput } from "./input";
@@ -72,6 +72,7 @@ export function spectrumMarks(
   const leastGap = (6.2 * layout.sizes.small * Math.log(from / to)) / panel.width;
   const within = [0, panel.x + panel.width + layout.panelGap / 2] as const;
   const hasBand = input.band.filter !== "none";
+  const note = input.spectrum ? "" : (input.spectrumNote ?? "");
   const { frequency = new Float64Array(0) } = input.spectrum ?? {};
   const curve = polylinePath(
     Array.from(frequency, (value) => (value > 0 ? pixelX(panel, 1 / value) : Number.NaN)),
@@ -81,11 +82,19 @@ export function spectrumMarks(
     groundMark(panel, theme),
     ...(hasBand ? bandMarks(input, panel, theme) : []),
     pathMark("spectrum-line", curve, { stroke: theme.ink, strokeWidth: dataWidth, clip: panel.id }),
+    ...(note === "" ? [] : [noteMark(note, panel, theme, layout.sizes)]),
     frameMark(panel, theme),
     ...(hasBand ? edgeMarks(input, panel, bandLabelBase, theme, layout.sizes) : []),
     ...leftTickMarks(panel, varianceTicks(panel, input), theme, layout.sizes),
     ...bottomTickMarks(panel, periodTicks(from, to, leastGap), within, theme, layout.sizes),
   ];
+}
+
+/** Why the curve is missing, in the middle of where it would be. */
+function noteMark(note: string, panel: PanelFrame, theme: Theme, { small }: TypeSizes): Mark {
+  const text = fittingText([note, "No spectrum"], panel.width - 2 * small, small);
+  const [x, y] = [panel.x + panel.width / 2, panel.y + panel.height / 2 + 0.34 * small];
+  return textMark("spectrum-note", x, y, text, { size: small, fill: theme.softInk, anchor: "middle" });
 }
 
 /** Pixels of the band's edges; an open side lies on the frame. */

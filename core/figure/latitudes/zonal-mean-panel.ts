@@ -5,6 +5,7 @@ import { pixelX, pixelY } from "../panel";
 import type { Mark, PanelFrame } from "../scene";
 import { linearTicks } from "../ticks";
 import { bottomTickMarks, dataWidth, frameMark, groundMark, hairWidth, roomiestTicks } from "./axis-marks";
+import { errorsWithin95 } from "./doubtful-cells";
 import type { LatitudesInput } from "./input";
 import type { LatitudesLayout } from "./layout";
 import { latitudeScale } from "./map-panel";
@@ -39,7 +40,10 @@ function widestExcursion({ result }: LatitudesInput): number {
   return Math.max(lines, lines > 0 ? Math.min(band, mostBandReach * lines) : band);
 }
 
-/** Mean over the period in ink with its 95 % band, the date's zonal mean in amber. Breaks where a value is NaN. */
+/**
+ * Mean over the period in ink with its 95 % band, the date's zonal mean in amber, within its own error where that is known.
+ * Breaks where a value is NaN.
+ */
 export function zonalMeanMarks(
   input: LatitudesInput,
   layout: LatitudesLayout,
@@ -55,11 +59,20 @@ export function zonalMeanMarks(
     xs((row) => mean[row] + half95[row]),
     ys,
   );
+  const { onDate, error } = input.result;
+  const dateBand = error
+    ? bandPath(
+        xs((row) => onDate[row] - errorsWithin95 * error.onDate[row]),
+        xs((row) => onDate[row] + errorsWithin95 * error.onDate[row]),
+        ys,
+      )
+    : "";
   const zero = pixelX(panel, 0);
   const clip = panel.id;
   return [
     groundMark(panel, theme),
     pathMark("zonal-mean-band", band, { fill: theme.spread, clip }),
+    ...(dateBand === "" ? [] : [pathMark("zonal-mean-date-band", dateBand, { fill: theme.amberTint, clip })]),
     pathMark("zonal-mean-zero", linePath(zero, panel.y, zero, panel.y + panel.height), {
       stroke: theme.rule,
       strokeWidth: hairWidth,
@@ -68,7 +81,7 @@ export function zonalMeanMarks(
     pathMark(
       "zonal-mean-date",
       polylinePath(
-        xs((row) => input.result.onDate[row]),
+        xs((row) => onDate[row]),
         ys,
       ),
       {

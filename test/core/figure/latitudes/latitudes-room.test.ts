@@ -5,7 +5,7 @@ import { latitudesScene } from "../../../../core/figure/latitudes-figure";
 import { printSize } from "../../../../core/figure/print-size";
 import type { Scene } from "../../../../core/figure/scene";
 import { sceneToSvg } from "../../../../core/figure/scene-to-svg";
-import { madeUpInput } from "./made-up-record";
+import { madeUpInput, withDoubts } from "./made-up-record";
 import { overlaps, textBoxes } from "./text-boxes";
 
 const wide = { width: 1440, height: 900 };
@@ -51,6 +51,11 @@ describe("room", () => {
     ],
     ["thirty years", madeUpInput({ dates: 3650, rows: 30, columns: 30 })],
     ["twenty days", madeUpInput({ dates: 7, rows: 30, columns: 30 })],
+    ["errors, a blend and bridged gaps", withDoubts(input)],
+    [
+      "no spectrum",
+      { ...input, spectrum: undefined, spectrumNote: "No spectrum: it takes at least 16 dates an even step apart." },
+    ],
     ["one cell and one date", madeUpInput({ dates: 1, rows: 1, columns: 1 })],
   ];
 
@@ -80,7 +85,7 @@ describe("room", () => {
   test.each([127, 140, 174, 190])("at %i mm every text is 8 pt or more and every line 0.5 pt or more", (widthMm) => {
     const size = printSize(widthMm);
     const pointsPerPixel = ((widthMm / 25.4) * 72) / size.width;
-    for (const mark of latitudesScene(input, size).marks) {
+    for (const mark of latitudesScene(withDoubts(input), size).marks) {
       if (mark.kind === "text") expect(mark.size * pointsPerPixel).toBeGreaterThanOrEqual(7.99);
       if (mark.kind === "path" && mark.stroke !== "none") {
         expect(mark.strokeWidth * pointsPerPixel).toBeGreaterThanOrEqual(0.5);

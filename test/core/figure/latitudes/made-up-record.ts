@@ -130,3 +130,24 @@ export function madeUpInput(shape: MadeUpShape = {}): LatitudesInput {
     date: "24 May 2032",
   };
 }
+
+/** The same with height errors that a third of the cells do not exceed, rows of an equatorial blend and a bridge over gaps. */
+export function withDoubts(input: LatitudesInput): LatitudesInput {
+  const { map, onDate } = input.result;
+  return {
+    ...input,
+    record: {
+      ...input.record,
+      blendedRows: Uint8Array.from(onDate, (_, row) => (row < 5 || (row > 10 && row < 14) ? 1 : 0)),
+    },
+    result: {
+      ...input.result,
+      error: {
+        map: { ...map, values: new Float32Array(map.values.length).fill(0.012) },
+        onDate: onDate.map(() => 0.002),
+      },
+    },
+    band: { ...input.band, order: 4, bridgeDays: 20 },
+    errorSource: "a 2 cm height error",
+  };
+}
