@@ -172,6 +172,8 @@ export function connectDoor(port: Port, options: ConnectOptions = {}): DoorConne
     latitudes: (args, callOptions) => call("latitudes", args, callOptions),
     spectrum: (args, callOptions) => call("spectrum", args, callOptions),
     velocities: (args, callOptions) => call("velocities", args, callOptions),
+    jets: (args, callOptions) => call("jets", args, callOptions),
+    eddyTest: (args, callOptions) => call("eddyTest", args, callOptions),
     run: (args, callOptions) => call("run", args, callOptions),
     save: (args, callOptions) => call("save", args, callOptions),
   };

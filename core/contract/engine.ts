@@ -1,5 +1,6 @@
 import type { Axis, TimeAxis } from "../model/axis";
 import type { FaultData } from "../model/errors";
+import type { EddyTestResult, JetsResult } from "../model/jets-result";
 import type {
   BandResponse,
   FieldError,
@@ -123,6 +124,13 @@ export interface Engine {
     request: { readonly open: OpenStudy; readonly grid: string },
     options?: CallOptions,
   ): Promise<SuppliedVelocityReport | null>;
+  /** Finds and follows the jets of the record in the study's band. */
+  jets(request: { readonly open: OpenStudy; readonly grid: string }, options?: CallOptions): Promise<JetsResult>;
+  /** Holds those jets against random oceans of passing eddies. Long; the same seed gives the same answer. */
+  eddyTest(
+    request: { readonly open: OpenStudy; readonly grid: string },
+    options?: CallOptions,
+  ): Promise<EddyTestResult>;
   /** Writes the result folder, whole or not at all. */
   run(
     request: { readonly open: OpenStudy; readonly folder: string; readonly overwrite: boolean },

@@ -35,6 +35,8 @@ export const requestShapes: RequestShapes = {
   latitudes: { open: "study", grid: "text", choice: "choice", dateIndex: "count", columns: "count" },
   spectrum: { open: "study", grid: "text", quantity: "text" },
   velocities: { open: "study", grid: "text" },
+  jets: { open: "study", grid: "text" },
+  eddyTest: { open: "study", grid: "text" },
   run: { open: "study", folder: "text", overwrite: "flag" },
   save: { open: "study", path: "text" },
 };

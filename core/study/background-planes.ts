@@ -1,9 +1,9 @@
-import { addToNormal, type BackgroundBasis, solveBackground } from "../numeric/background";
+import { addToNormal, type BackgroundBasis, removedCoefficients, solveBackground } from "../numeric/background";
 import type { HeightRecord } from "./record";
 
 /**
- * Least-squares background of every ocean cell in rows [fromRow, toRow): writes coefficients to
- * `out[term * cells + cell]`, cells = rows × columns; NaN for land and for cells that lack the data (see solveBackground).
+ * Least-squares background of every ocean cell in rows [fromRow, toRow): writes the coefficients of what is taken off (0 for
+ * terms that stay) to `out[term * cells + cell]`, cells = rows × columns; NaN for land and for cells that lack the data (see solveBackground).
  *
  * Each cell sees the same sums in the same order whatever the rows a caller asks for, so results do not depend on how the
  * work is shared out. `poll` is called once a date.
@@ -51,7 +51,7 @@ export function backgroundPlanes(
     const correction = corrections.get(cell);
     const normal = correction ? shared.map((value, i) => value + correction.normal[i]) : shared;
     for (let term = 0; term < terms; term++) own[term] = right[term * count + cell];
-    const solved = solveBackground(normal, own, dates - (correction?.missing ?? 0));
+    const solved = removedCoefficients(solveBackground(normal, own, dates - (correction?.missing ?? 0)), basis);
     for (let term = 0; term < terms; term++) out[term * cells + from + cell] = solved[term];
   }
 }

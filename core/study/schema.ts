@@ -86,6 +86,54 @@ export const errorSettings = z.strictObject({
   correlationKm: z.number().min(0).max(2000).default(0),
 });
 
+export const jetSettings = z.strictObject({
+  /** Least prominence of an extreme in m s-1; "auto": the larger of 1 cm/s and half the standard deviation of the picture. */
+  prominence: z.union([z.literal("auto"), z.number().positive()]).default("auto"),
+  /** Width of the longitude sectors that tell a jet's extent and tilt. */
+  sectorDegrees: z.number().min(1).max(180).default(5),
+  fastestDegreesPerDay: z.number().positive().default(0.05),
+  /** A jet not found for longer than this has ended. */
+  longestGapDays: z.number().min(0).default(15),
+  /** Shorter-lived lines are not listed as jets. */
+  leastLifetimeDays: z.number().min(0).default(90),
+});
+
+export const eddyTestSettings = z.strictObject({
+  /** Random oceans drawn; 0 leaves the test out of a run. */
+  oceans: z.number().int().min(0).max(20_000).default(500),
+  seed: z.number().int().min(0).max(4294967295).default(1),
+  /** Chance that any jet is held in an ocean of eddies alone. */
+  level: z.number().min(0.001).max(0.5).default(0.05),
+  /** What is set here is not estimated from the data. */
+  population: z
+    .strictObject({
+      medianAmplitudeMetres: z.number().positive().optional(),
+      medianRadiusMetres: z.number().positive().optional(),
+      densityPerMillionKm2: z.number().positive().optional(),
+      lifetimeDays: z.number().positive().optional(),
+      speedMetresPerSecond: z.number().optional(),
+    })
+    .prefault({}),
+});
+
+export const scaleSettings = z.strictObject({
+  /** First deformation radius: the built-in table by latitude, a constant first-mode speed in m s-1, or a file of latitude and km. */
+  deformation: z
+    .union([
+      z.literal("table"),
+      z.strictObject({ waveSpeed: z.number().positive() }),
+      z.strictObject({ file: z.string().min(1) }),
+    ])
+    .default("table"),
+  /** Speed for the Rhines scale: rms of the whole flow or of the eddies. */
+  rhinesSpeed: z.enum(["total", "eddy"]).default("eddy"),
+  /** Repeat periods of the altimeters behind the maps, in days; tidal aliases in the band are cautioned. */
+  repeatDays: z.array(z.number().positive()).default([9.915642, 35]),
+  /** What the mapping resolves. */
+  resolvedDays: z.number().positive().default(30),
+  resolvedKm: z.number().positive().default(180),
+});
+
 export const outputSettings = z.strictObject({
   fields: z.enum(["none", "mean", "all"]).default("mean"),
   figures: z.array(z.string()).default(["latitudes"]),
@@ -108,9 +156,9 @@ export const studySchema = z.strictObject({
   space: spaceSettings.prefault({}),
   band: bandSettings.prefault({}),
   errors: errorSettings.prefault({}),
-  jets: z.strictObject({}).prefault({}),
-  eddyTest: z.strictObject({}).prefault({}),
-  scales: z.strictObject({}).prefault({}),
+  jets: jetSettings.prefault({}),
+  eddyTest: eddyTestSettings.prefault({}),
+  scales: scaleSettings.prefault({}),
   compare: z.strictObject({}).prefault({}),
   outputs: outputSettings.prefault({}),
 });
@@ -122,6 +170,9 @@ export type Region = z.output<typeof region>;
 export type Period = z.output<typeof period>;
 export type GeostrophySettings = z.output<typeof geostrophySettings>;
 export type BackgroundSettings = z.output<typeof backgroundSettings>;
+export type JetSettings = z.output<typeof jetSettings>;
+export type EddyTestSettings = z.output<typeof eddyTestSettings>;
+export type ScaleSettings = z.output<typeof scaleSettings>;
 export type SpaceSettings = z.output<typeof spaceSettings>;
 export type ErrorSettings = z.output<typeof errorSettings>;
 export type BandSettings = z.output<typeof bandSettings>;

@@ -9,6 +9,8 @@ import { readStudy } from "../../core/study/read";
 import type { Study } from "../../core/study/schema";
 import { describeFile } from "../readers/describe";
 import { writeFileWhole } from "../writers/atomic-file";
+import { eddyTestResult } from "./eddy-test";
+import { jetsResult } from "./jets";
 import { Job } from "./job";
 import { latitudesResult } from "./latitudes";
 import { openStudy } from "./open-study";
@@ -60,6 +62,8 @@ export function createEngine(options: { readonly workers?: number } = {}): Engin
     spectrum: ({ open, grid, quantity }, call) =>
       withJob(call, (job) => spectrumResult(workspace(), open, grid, quantity, job)),
     velocities: ({ open, grid }, call) => withJob(call, (job) => suppliedVelocity(workspace(), open, grid, job)),
+    jets: ({ open, grid }, call) => withJob(call, (job) => jetsResult(workspace(), open, grid, job)),
+    eddyTest: ({ open, grid }, call) => withJob(call, (job) => eddyTestResult(workspace(), open, grid, job)),
     run: (request, call) => withJob(call, (job) => runStudy(workspace(), request, job)),
     save: async ({ open, path }) => {
       await writeFileWhole(path, `${JSON.stringify(studyFrom(open, dirname(path)), null, 2)}\n`);

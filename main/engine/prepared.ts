@@ -14,7 +14,7 @@ import { type FieldArguments, fieldSettings } from "./tasks/field";
 
 /** Stands where fields are taken as they stand. */
 export const noBackground: Background = {
-  basis: { names: [], samples: 0, values: new Float64Array(0) },
+  basis: { names: [], removed: new Uint8Array(0), samples: 0, values: new Float64Array(0) },
   coefficients: new Float64Array(0),
 };
 

@@ -114,3 +114,13 @@ describe("the background against numpy.linalg.lstsq", () => {
     }
   });
 });
+
+test("a season alone leaves the mean and takes nothing of it, though the record is no whole number of years", () => {
+  const days = Float64Array.from({ length: 300 }, (_, t) => 22000 + 3 * t);
+  const basis = backgroundBasis(days, { mean: false, trend: false, annual: true, semiannual: true }, 365.2425);
+  const series = days.map((day) => 5 + 0.3 * Math.cos((2 * Math.PI * day) / 365.2425));
+  expectAllClose(removeBackground(series, basis), new Float64Array(300).fill(5), {
+    absolute: 1e-11,
+    because: "the series is exactly a mean and a season",
+  });
+});

@@ -143,6 +143,8 @@ export function standInEngine(calls: string[] = []): Engine {
       };
     },
     velocities: async () => null,
+    jets: async () => ({}) as never,
+    eddyTest: async () => ({}) as never,
     async spectrum({ quantity }) {
       await pause(20);
       const frequency = Float64Array.from({ length: 150 }, (_, i) => (i + 1) / (dates * stepDays));

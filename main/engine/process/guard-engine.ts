@@ -79,6 +79,9 @@ export function guardEngine(engine: Engine, grants: Grants): Engine {
       engine.spectrum({ ...request, open: await checkedStudy(request.open) }, options),
     velocities: async (request, options) =>
       engine.velocities({ ...request, open: await checkedStudy(request.open) }, options),
+    jets: async (request, options) => engine.jets({ ...request, open: await checkedStudy(request.open) }, options),
+    eddyTest: async (request, options) =>
+      engine.eddyTest({ ...request, open: await checkedStudy(request.open) }, options),
     run: async (request, options) => {
       const folder = await grants.writable(request.folder);
       return engine.run({ ...request, folder, open: await checkedStudy(request.open) }, options);

@@ -63,14 +63,14 @@ export function timeAttributes(analysis: Analysis): Attributes {
 export function globalAttributes(analysis: Analysis, title: string): Attributes {
   const { study } = analysis.open;
   const { time } = analysis.stages.record;
-  const { geostrophy, background, band } = study;
+  const { geostrophy, background, space, band, errors } = study;
   const from = formatDay(time.calendar, time.values[0]);
   const to = formatDay(time.calendar, time.values[time.values.length - 1]);
   return {
     Conventions: "CF-1.11",
     title: `${title}${study.title ? `: ${study.title}` : ""}`,
     source: `heights of grid ${analysis.grid}: ${analysis.loaded.index.files.length} files, variable ${analysis.loaded.index.height.name}`,
-    history: `strake ${version} run; ${from} to ${to}; geostrophy ${JSON.stringify(geostrophy)}; background ${JSON.stringify(background)}; band ${JSON.stringify(band)}`,
+    history: `strake ${version} run; ${from} to ${to}; geostrophy ${JSON.stringify(geostrophy)}; background ${JSON.stringify(background)}; space ${JSON.stringify(space)}; band ${JSON.stringify(band)}; errors ${JSON.stringify(errors)}`,
     comment: "Geostrophic part only. Not for navigation or operations at sea.",
   };
 }

@@ -97,12 +97,13 @@ function spaceText({ space }: Study): string[] {
   if (space.removeSurface) {
     const { zonalKm, meridionalKm } = space.removeSurface;
     parts.push(
-      `a large-scale loess surface of half-spans ${zonalKm} km (zonal) and ${meridionalKm} km (meridional) was taken off`,
+      `a large-scale loess surface (Cleveland and Devlin 1988) of half-spans ${zonalKm} km (zonal) and ${meridionalKm} km (meridional) was taken off`,
     );
   }
   if (space.removeZonalMean) parts.push("each row's zonal mean was taken off");
-  if (space.zonal) parts.push(`zonal wavelengths ${words(space.zonal)} were kept`);
-  if (space.meridional) parts.push(`meridional wavelengths ${words(space.meridional)} were kept`);
+  if (space.zonal) parts.push(`zonal wavelengths ${words(space.zonal)} were kept by Lanczos weights (Duchon 1979)`);
+  if (space.meridional)
+    parts.push(`meridional wavelengths ${words(space.meridional)} were kept by Lanczos weights (Duchon 1979)`);
   return parts.length > 0 ? [`Of every height map, before differencing, ${listed(parts)}.`, ""] : [];
 }
 
@@ -127,7 +128,7 @@ function backgroundText({ background }: Study, { stages }: Analysis): string {
   const removed = (Object.keys(names) as (keyof typeof names)[])
     .filter((key) => background[key])
     .map((key) => names[key]);
-  return `Before filtering, the ${listed(removed)} were fitted together by least squares over the dates with data and taken off. Maps and means that are not in the band keep them.`;
+  return `Before filtering, the ${listed(removed)} were ${background.mean ? "fitted together" : "fitted together with the mean"} by least squares over the dates with data and taken off${background.mean ? "" : "; the mean stays"}. Maps and means that are not in the band keep them.`;
 }
 
 function bandText({ band }: Study, { stages }: Analysis): string {
@@ -151,10 +152,12 @@ function bandText({ band }: Study, { stages }: Analysis): string {
   );
 }
 
-function references({ geostrophy, band }: Study): string[] {
+function references({ geostrophy, space, band }: Study): string[] {
+  const hasLanczos = band.filter === "lanczos" || space.zonal !== null || space.meridional !== null;
   return [
     "Bretherton, C. S., et al. (1999). J. Climate 12, 1990–2009.",
-    ...(band.filter === "lanczos" ? ["Duchon, C. E. (1979). J. Appl. Meteor. 18, 1016–1022."] : []),
+    ...(space.removeSurface ? ["Cleveland, W. S., and Devlin, S. J. (1988). J. Am. Stat. Assoc. 83, 596–610."] : []),
+    ...(hasLanczos ? ["Duchon, C. E. (1979). J. Appl. Meteor. 18, 1016–1022."] : []),
     "Fornberg, B. (1988). Math. Comp. 51, 699–706.",
     ...(geostrophy.equator === "blend"
       ? ["Lagerloef, G. S. E., et al. (1999). J. Geophys. Res. 104, 23313–23326."]

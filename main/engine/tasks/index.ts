@@ -1,7 +1,10 @@
 import type { JobFlags } from "../job";
 import { backgroundTask } from "./background";
+import { eddyOceansTask } from "./eddy-oceans";
+import { eddyPopulationTask } from "./eddy-population";
 import { errorPlanesTask } from "./error-planes";
 import { fieldPlanesTask } from "./field-planes";
+import { jetsTask } from "./jets";
 import { limitsTask } from "./limits";
 import { mapTask } from "./map";
 import { momentsTask } from "./moments";
@@ -9,6 +12,7 @@ import { pictureTask } from "./picture";
 import { readTask } from "./read";
 import { reduceTask } from "./reduce";
 import { rmsPlaneTask } from "./rms-plane";
+import { sectorSeriesTask } from "./sector-series";
 import { spectrumTask } from "./spectrum";
 import { velocitiesTask } from "./velocities";
 import { zonalBandTask } from "./zonal-band";
@@ -25,6 +29,10 @@ export const tasks = {
   spectrum: spectrumTask,
   moments: momentsTask,
   fieldPlanes: fieldPlanesTask,
+  sectorSeries: sectorSeriesTask,
+  jets: jetsTask,
+  eddyPopulation: eddyPopulationTask,
+  eddyOceans: eddyOceansTask,
   errorPlanes: errorPlanesTask,
   rmsPlane: rmsPlaneTask,
   velocities: velocitiesTask,
