@@ -92,7 +92,7 @@ export async function latitudesResult(
     limits,
     pictureLimits: colourLimits([series], quantityById(choice.quantity).signed),
     response: responseOf(open.study, filter, record),
-    error: await fieldError(workspace, request, stages, job),
+    error: await fieldError(workspace, request, stages, { map, onDate }, job),
   };
 }
 
@@ -105,11 +105,12 @@ const errorSources = {
   "rossby-number": "vorticity",
 } as const;
 
-/** Standard errors of the map and of its zonal means; null where the study or the quantity has none. */
+/** Standard errors of the map and of its zonal means, NaN where they are; null where the study or the quantity has none. */
 async function fieldError(
   workspace: Workspace,
   { open, grid, choice, dateIndex }: LatitudesRequest,
   { record, filter }: FieldStages,
+  { map, onDate }: { readonly map: Float64Array; readonly onDate: Float64Array },
   job: Job,
 ): Promise<FieldError | null> {
   const source = errorSources[choice.quantity as keyof typeof errorSources] as
@@ -122,11 +123,13 @@ async function fieldError(
   const share = choice.inBand && kept ? Math.sqrt(kept.reduce((sum, weight) => sum + weight * weight, 0)) : 1;
   const { coriolis } = geometryOf(record.axes, open.study.geostrophy);
   const scaled = planes[source].map((error, cell) => {
+    if (Number.isNaN(map[cell])) return Number.NaN;
     const perF = choice.quantity === "rossby-number" ? Math.abs(coriolis[Math.floor(cell / columns)]) : 1;
     return (share * error) / perF;
   });
   const { standardError } = errorOfZonalMean(scaled, record.axes, open.study.errors.correlationKm);
-  return { map: plane(scaled, rows, columns), onDate: standardError };
+  const ofMeans = standardError.map((error, row) => (Number.isNaN(onDate[row]) ? Number.NaN : error));
+  return { map: plane(scaled, rows, columns), onDate: ofMeans };
 }
 
 /** Latitude–time matrix of a field at the dates asked for: `series[row * at.length + i]`, NaN on dates without data. */
