@@ -9,7 +9,9 @@ const folder = fileURLToPath(new URL("../sample-data", import.meta.url));
 /** The sample study with some keys changed, as an engine would open it. */
 export function sampleStudy(changes: object = {}): OpenStudy {
   const path = resolve(folder, "halcyon.study.json");
-  const study = readStudy({ ...JSON.parse(readFileSync(path, "utf8")), ...changes }, "sample");
+  // The defaults of band and background, and a short eddy test, unless a test asks otherwise.
+  const plain = { band: {}, background: {}, eddyTest: { oceans: 20 } };
+  const study = readStudy({ ...JSON.parse(readFileSync(path, "utf8")), ...plain, ...changes }, "sample");
   return { study, folder, path };
 }
 

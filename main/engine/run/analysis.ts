@@ -12,6 +12,7 @@ import type { TaskResult } from "../tasks";
 import type { FieldArguments } from "../tasks/field";
 import { addMoments, type Moments } from "../tasks/moments";
 import type { Workspace } from "../workspace";
+import { analyseJets, type JetsAnalysis } from "./jets-analysis";
 
 /** Quantities that a run writes as maps. */
 export const mappedQuantities = quantities.filter(({ id }) => ["height", "u", "v", "vorticity"].includes(id));
@@ -36,6 +37,7 @@ export interface Analysis {
   readonly moments: Moments;
   /** null for a study without a band. */
   readonly band: { readonly zonal: ZonalAnalysis; readonly moments: Moments } | null;
+  readonly jets: JetsAnalysis;
   /** Standard errors from the study's height error; null where it names none. */
   readonly errors: TaskResult<"errorPlanes"> | null;
   /** null where the files supply no velocity. */
@@ -66,6 +68,7 @@ export async function analyse(workspace: Workspace, open: OpenStudy, job: Job): 
           moments: await momentsOf(pool, banded, "Averaging maps in the band", job),
         }
       : null,
+    jets: await analyseJets(workspace, open, grid, job),
     errors: await workspace.errors(open, grid, job),
     supplied: await suppliedVelocity(workspace, open, grid, job),
     spectrum: hasBand ? await spectrumResult(workspace, open, grid, "u", job) : null,

@@ -12,6 +12,7 @@ import { analyse } from "./analysis";
 import { writeFields } from "./fields-file";
 import { writeFigures } from "./figure-files";
 import { fingerprints } from "./fingerprint";
+import { jetsTable } from "./jets-table";
 import { writeLatitudeTime } from "./latitude-time-file";
 import { methodsText } from "./methods-text";
 import { profileTable } from "./profile-table";
@@ -37,6 +38,11 @@ export async function runStudy(
     }
     await writeLatitudeTime(join(stage, "latitude-time.nc"), analysis);
     await writeFileWhole(join(stage, "profile.csv"), profileTable(analysis));
+    if (analysis.jets.jets) {
+      const { time } = analysis.stages.record;
+      await writeFileWhole(join(stage, "jets.csv"), jetsTable(analysis.jets.jets, analysis.jets.eddyTest, time));
+      files.push("jets.csv");
+    }
     await writeFileWhole(join(stage, "methods.md"), methodsText(analysis));
     files.push(...(await writeFigures(stage, analysis, workspace, job)));
     const inputs = await fingerprints(analysis.loaded.index, open.folder, () => job.throwIfCancelled());

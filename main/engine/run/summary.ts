@@ -5,6 +5,7 @@ import { daysLost } from "../latitudes";
 import type { Moments } from "../tasks/moments";
 import { type Analysis, mappedQuantities } from "./analysis";
 import type { InputFile } from "./fingerprint";
+import { jetsSummary } from "./jets-summary";
 import { version } from "./version";
 
 export interface Quantified {
@@ -47,6 +48,7 @@ export function summaryOf(analysis: Analysis, inputs: readonly InputFile[], file
     },
     headline: headlineOf(analysis),
     filter: filterOf(analysis),
+    jets: jetsSummary(analysis.jets),
     errors: errorsOf(analysis),
     suppliedVelocity: suppliedOf(analysis),
     cautions: cautionsFor(open.study, record),
