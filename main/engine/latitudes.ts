@@ -90,7 +90,7 @@ export async function latitudesResult(
     columnDates,
     filterEnd: filter ? filter.ends(record.hasData) : new Uint8Array(dates),
     limits,
-    pictureLimits: colourLimits([series], quantityById(choice.quantity).signed),
+    pictureLimits: colourLimits([series], quantityById(choice.quantity)),
     response: responseOf(open.study, filter, record),
     error: await fieldError(workspace, request, stages, { map, onDate }, job),
   };

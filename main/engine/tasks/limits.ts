@@ -18,5 +18,5 @@ export function limitsTask(
     job.poll();
     return source.on(date)(args.quantity);
   });
-  return colourLimits(planes, quantityById(args.quantity).signed);
+  return colourLimits(planes, quantityById(args.quantity));
 }
