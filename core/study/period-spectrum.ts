@@ -1,53 +1,133 @@
 import type { SpectrumResult } from "../model/results";
 import { type BackgroundBasis, removeBackground } from "../numeric/background";
 import { bridgeGaps } from "../numeric/gaps";
+import { detrended } from "../numeric/spectra/detrend";
+import { lombScargle } from "../numeric/spectra/lomb-scargle";
+import { type Taper, taperName } from "../numeric/spectra/tapers";
 import { welchSpectrum } from "../numeric/welch";
+import type { SpectrumSettings } from "./schema";
 
-/** Longest segment in days: long enough for interannual periods, short enough that long records give several. */
-const longestSegmentDays = 3000;
 /** Gaps up to this many samples are bridged by straight lines before the transform. */
 export const bridgedSamples = 5;
 
+interface Described {
+  readonly id: string;
+  readonly units: string;
+}
+
+/** `samples[cell * dates + t]`. */
+type Samples = ArrayLike<number> & { subarray(from: number, to: number): ArrayLike<number> };
+
+const usual: SpectrumSettings = { taper: "hann", overlap: 0.5, detrend: "constant", longestSegmentDays: 3000 };
+
 /**
- * Spectrum by period of a region: Welch spectra (Hann, half overlap, constant removed) of the sampled cells' anomalies,
- * averaged with each cell's weight (area). `samples[cell * dates + t]`. Cells with a gap longer than five samples leave out
- * the segments it falls in. NaN density where no segment of any cell is whole.
+ * Spectrum by period of a region: Welch spectra (Hann and half overlap unless told otherwise) of the sampled cells' anomalies, averaged with the cells' weights. Cells with
+ * a gap longer than five samples leave out the segments it falls in. NaN density where no segment of any cell is whole.
  */
 export function regionSpectrum(
-  quantity: { readonly id: string; readonly units: string },
-  samples: ArrayLike<number> & { subarray(from: number, to: number): ArrayLike<number> },
+  quantity: Described,
+  samples: Samples,
   cellWeights: Float64Array,
   stepDays: number,
   basis: BackgroundBasis,
+  settings: SpectrumSettings = usual,
 ): SpectrumResult {
   const dates = basis.samples;
-  const segment = Math.min(dates, Math.max(8, Math.floor(longestSegmentDays / stepDays)));
-  let frequency: Float64Array = new Float64Array(0);
-  let density: Float64Array = new Float64Array(0);
-  let totalWeight = 0;
+  const taper = taperOf(settings.taper);
+  const segment = Math.min(dates, Math.max(8, Math.floor(settings.longestSegmentDays / stepDays)));
+  const mean = new WeightedMean();
   let segments = 0;
   for (let cell = 0; cell < cellWeights.length; cell++) {
     const series = Float64Array.from(samples.subarray(cell * dates, (cell + 1) * dates));
     const { values } = bridgeGaps(removeBackground(series, basis), bridgedSamples);
-    const spectrum = welchSpectrum(trimmed(values), stepDays, { segment, overlap: 0.5, detrend: "constant" });
-    if (spectrum.segments === 0 || (density.length > 0 && spectrum.density.length !== density.length)) continue;
-    if (density.length === 0) {
-      frequency = spectrum.frequency;
-      density = new Float64Array(spectrum.density.length);
-    }
-    for (let k = 0; k < density.length; k++) density[k] += cellWeights[cell] * spectrum.density[k];
-    totalWeight += cellWeights[cell];
-    segments = Math.max(segments, spectrum.segments);
+    const { overlap, detrend } = settings;
+    const spectrum = welchSpectrum(trimmed(values), stepDays, { segment, overlap, detrend, taper });
+    if (spectrum.segments === 0) continue;
+    if (mean.add(spectrum.frequency, spectrum.density, cellWeights[cell]))
+      segments = Math.max(segments, spectrum.segments);
+  }
+  const window = `${taperName(taper)}, overlap ${Math.round(100 * settings.overlap)} %`;
+  return {
+    ...mean.result(),
+    quantity: quantity.id,
+    segments,
+    segmentDays: segment * stepDays,
+    window,
+    units: unitsOf(quantity),
+  };
+}
+
+/**
+ * The same for dates at uneven steps: Lomb-Scargle periodograms of the cells' anomalies at the frequencies of as many even
+ * dates over the same time, as a density whose sum times the frequency spacing is the variance about the mean.
+ */
+export function unevenRegionSpectrum(
+  quantity: Described,
+  samples: Samples,
+  cellWeights: Float64Array,
+  days: Float64Array,
+  basis: BackgroundBasis,
+  settings: Pick<SpectrumSettings, "detrend"> = usual,
+): SpectrumResult {
+  const dates = days.length;
+  const span = ((days[dates - 1] - days[0]) * dates) / (dates - 1);
+  const frequency = Float64Array.from({ length: Math.floor(dates / 2) }, (_, k) => (k + 1) / span);
+  const mean = new WeightedMean();
+  for (let cell = 0; cell < cellWeights.length; cell++) {
+    const anomaly = removeBackground(Float64Array.from(samples.subarray(cell * dates, (cell + 1) * dates)), basis);
+    const known = Array.from(anomaly.keys()).filter((t) => !Number.isNaN(anomaly[t]));
+    if (known.length < dates / 2) continue;
+    const times = Float64Array.from(known, (t) => days[t]);
+    const values = detrended(
+      Float64Array.from(known, (t) => anomaly[t]),
+      settings.detrend,
+    );
+    const { power } = lombScargle(times, values, frequency);
+    mean.add(
+      frequency,
+      power.map((value) => (2 * value * span) / known.length),
+      cellWeights[cell],
+    );
   }
   return {
+    ...mean.result(),
     quantity: quantity.id,
-    frequency,
-    density: density.map((value) => value / totalWeight),
-    segments,
-    segmentDays: frequency.length > 1 ? 1 / frequency[1] : segment * stepDays,
-    window: "Hann, half overlap",
-    units: quantity.units === "1" ? "day" : `(${quantity.units})2 day`,
+    segments: 1,
+    segmentDays: span,
+    window: "Lomb-Scargle, no taper",
+    units: unitsOf(quantity),
   };
+}
+
+/** Mean of spectra on one frequency axis, weighted; others are passed over. */
+class WeightedMean {
+  #frequency: Float64Array = new Float64Array(0);
+  #sum: Float64Array = new Float64Array(0);
+  #weight = 0;
+
+  add(frequency: Float64Array, density: Float64Array, weight: number): boolean {
+    if (this.#sum.length === 0) {
+      this.#frequency = frequency;
+      this.#sum = new Float64Array(density.length);
+    }
+    if (density.length !== this.#sum.length) return false;
+    for (let k = 0; k < density.length; k++) this.#sum[k] += weight * density[k];
+    this.#weight += weight;
+    return true;
+  }
+
+  result(): { frequency: Float64Array; density: Float64Array } {
+    return { frequency: this.#frequency, density: this.#sum.map((value) => value / this.#weight) };
+  }
+}
+
+function taperOf(kind: SpectrumSettings["taper"]): Taper {
+  if (kind === "cosine") return { kind, share: 0.2 };
+  return kind === "multitaper" ? { kind: "sine", count: 4 } : { kind };
+}
+
+function unitsOf({ units }: Described): string {
+  return units === "1" ? "day" : `(${units})2 day`;
 }
 
 /** Without the missing samples at both ends. */

@@ -134,6 +134,15 @@ export const scaleSettings = z.strictObject({
   resolvedKm: z.number().positive().default(180),
 });
 
+/** How the spectrum by period is taken. */
+export const spectrumSettings = z.strictObject({
+  taper: z.enum(["hann", "hamming", "boxcar", "cosine", "multitaper"]).default("hann"),
+  /** Share of a segment that neighbouring ones have in common. */
+  overlap: z.number().min(0).max(0.9).default(0.5),
+  detrend: z.enum(["none", "constant", "linear"]).default("constant"),
+  longestSegmentDays: z.number().positive().default(3000),
+});
+
 export const outputSettings = z.strictObject({
   fields: z.enum(["none", "mean", "all"]).default("mean"),
   figures: z.array(z.string()).default(["latitudes"]),
@@ -155,6 +164,7 @@ export const studySchema = z.strictObject({
   background: backgroundSettings.prefault({}),
   space: spaceSettings.prefault({}),
   band: bandSettings.prefault({}),
+  spectrum: spectrumSettings.prefault({}),
   errors: errorSettings.prefault({}),
   jets: jetSettings.prefault({}),
   eddyTest: eddyTestSettings.prefault({}),
@@ -173,6 +183,7 @@ export type BackgroundSettings = z.output<typeof backgroundSettings>;
 export type JetSettings = z.output<typeof jetSettings>;
 export type EddyTestSettings = z.output<typeof eddyTestSettings>;
 export type ScaleSettings = z.output<typeof scaleSettings>;
+export type SpectrumSettings = z.output<typeof spectrumSettings>;
 export type SpaceSettings = z.output<typeof spaceSettings>;
 export type ErrorSettings = z.output<typeof errorSettings>;
 export type BandSettings = z.output<typeof bandSettings>;

@@ -8,7 +8,7 @@ import type { Workspace } from "./workspace";
 /** Fewest dates from which a spectrum is taken. */
 const fewestDates = 16;
 
-/** Region-mean spectrum by period of one quantity. Errors: an irregular record, fewer than 16 dates. */
+/** Region-mean spectrum by period of one quantity. Error: fewer than 16 dates. */
 export async function spectrumResult(
   workspace: Workspace,
   open: OpenStudy,
@@ -19,12 +19,12 @@ export async function spectrumResult(
   quantityById(quantity);
   const { record } = await workspace.record(open, grid, job);
   const { dates } = record.cube;
-  if (!record.time.even || dates < fewestDates) {
+  if (dates < fewestDates) {
     throw new Fault({
       tag: "period",
       where: "spectrum",
-      expected: `at least ${fewestDates} dates an even step apart`,
-      got: `${dates} ${record.time.even ? "dates" : "dates at uneven steps"}`,
+      expected: `at least ${fewestDates} dates`,
+      got: `${dates} ${dates === 1 ? "date" : "dates"}`,
       advice: "choose a longer period",
     });
   }
@@ -39,8 +39,9 @@ export async function spectrumResult(
       cellWeights: Float64Array.from(sampleCells, (cell) =>
         Math.cos((latitudes[Math.floor(cell / record.cube.columns)] * Math.PI) / 180),
       ),
-      stepDays: record.time.step,
+      time: record.time,
       basis,
+      settings: open.study.spectrum,
     },
     job,
   );
