@@ -59,7 +59,8 @@ export function regionSpectrum(
 
 /**
  * The same for dates at uneven steps: Lomb-Scargle periodograms of the cells' anomalies at the frequencies of as many even
- * dates over the same time, as a density whose sum times the frequency spacing is the variance about the mean.
+ * dates over the same time, each scaled so that its sum times the frequency spacing is the variance: on uneven dates the
+ * frequencies overlap, and the periodogram alone would add up to more.
  */
 export function unevenRegionSpectrum(
   quantity: Described,
@@ -83,11 +84,10 @@ export function unevenRegionSpectrum(
       settings.detrend,
     );
     const { power } = lombScargle(times, values, frequency);
-    mean.add(
-      frequency,
-      power.map((value) => (2 * value * span) / known.length),
-      cellWeights[cell],
-    );
+    const variance = values.reduce((sum, value) => sum + value * value, 0) / values.length;
+    const total = power.reduce((sum, value) => sum + value, 0) / span;
+    const density = power.map((value) => (value * variance) / total);
+    mean.add(frequency, density, cellWeights[cell]);
   }
   return {
     ...mean.result(),

@@ -42,7 +42,7 @@ describe("the region's spectrum by period", () => {
     const result = unevenRegionSpectrum(u, waves(days), weights, days, backgroundBasis(days, none, 365.2425));
     const peak = result.density.indexOf(Math.max(...result.density));
     expectClose(1 / result.frequency[peak], 60, { relative: 0.03, because: "the spacing of frequencies" });
-    expectClose(integral(result), variance, { relative: 0.05, because: "leakage between uneven frequencies" });
+    expectClose(integral(result), variance, { relative: 0.05, because: "waves that fit the record nearly" });
     expect(result.window).toContain("Lomb-Scargle");
   });
 });
