@@ -75,13 +75,39 @@ function shareAt(weights: Float64Array | null, halfWidth: number, hasData: Uint8
 export function filterSeries(series: Float64Array, filter: BandFilter, at?: Int32Array): Float64Array {
   const count = at ? at.length : series.length;
   const out = new Float64Array(count);
+  const { halfWidth } = filter;
+  const missing = missingBefore(series);
+  // Where the whole window is known both low-passes are plain sums, and one pass with their difference does.
+  const both = differenceOfWeights(filter);
   for (let i = 0; i < count; i++) {
     const t = at ? at[i] : i;
+    const from = t - halfWidth;
+    if (from >= 0 && t + halfWidth < series.length && missing[t + halfWidth + 1] === missing[from]) {
+      let sum = 0;
+      for (let k = 0; k < both.length; k++) sum += both[k] * series[from + k];
+      out[i] = sum;
+      continue;
+    }
     const fast = filter.fast ? weightedMean(series, filter.fast, filter.halfWidth, t) : series[t];
     const slow = filter.slow ? weightedMean(series, filter.slow, filter.halfWidth, t) : 0;
     out[i] = fast - slow;
   }
   return out;
+}
+
+/** Number of missing samples before each index. */
+function missingBefore(series: Float64Array): Int32Array {
+  const before = new Int32Array(series.length + 1);
+  for (let i = 0; i < series.length; i++) before[i + 1] = before[i] + (Number.isNaN(series[i]) ? 1 : 0);
+  return before;
+}
+
+/** Fast less slow weights; an open short side passes the sample itself. */
+function differenceOfWeights({ halfWidth, fast, slow }: BandFilter): Float64Array {
+  const both = fast ? fast.slice() : new Float64Array(2 * halfWidth + 1);
+  if (!fast) both[halfWidth] = 1;
+  if (slow) for (let k = 0; k < both.length; k++) both[k] -= slow[k];
+  return both;
 }
 
 function weightedMean(series: Float64Array, weights: Float64Array, halfWidth: number, t: number): number {

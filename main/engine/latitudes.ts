@@ -151,11 +151,21 @@ export async function pictureSeries(
   if (quantityById(field.quantity).linear) {
     const { time, hasData } = record;
     const { band } = field;
-    return pool.run(
+    const parts = await pool.share(
       "picture",
-      { zonal, record: { time, hasData }, rows, band, basis: background.basis, columns: at },
+      rows,
+      ([from, to]) => ({
+        zonal: zonal.subarray(from * dates, to * dates),
+        record: { time, hasData },
+        rows: to - from,
+        band,
+        basis: background.basis,
+        columns: at,
+      }),
       job,
+      pool.size,
     );
+    return joined(parts);
   }
   const parts = await job.step("Filtering map by map", at.length, () =>
     pool.share("zonalBand", at.length, ([from, to]) => ({ ...field, dates: at.subarray(from, to) }), job),
@@ -164,6 +174,16 @@ export async function pictureSeries(
   return Float64Array.from({ length: rows * at.length }, (_, i) => {
     return byDate[(i % at.length) * rows + Math.floor(i / at.length)];
   });
+}
+
+function joined(parts: readonly Float64Array[]): Float64Array {
+  const whole = new Float64Array(parts.reduce((sum, part) => sum + part.length, 0));
+  let start = 0;
+  for (const part of parts) {
+    whole.set(part, start);
+    start += part.length;
+  }
+  return whole;
 }
 
 function responseOf(study: Study, filter: TimeFilter | null, { time, cube }: HeightRecord): BandResponse {

@@ -16,11 +16,18 @@ export function redNoiseByLatitude(
   response: (cyclesPerSample: number) => number,
 ): Pick<JetsResult, "redNoise" | "redNoiseHeld"> {
   const dates = whole.length / rows;
+  // Every latitude asks for the same frequencies.
+  const known = new Map<number, number>();
+  const remembered = (frequency: number): number => {
+    const value = known.get(frequency) ?? response(frequency);
+    known.set(frequency, value);
+    return value;
+  };
   const bandP = new Float64Array(rows);
   const meanP = new Float64Array(rows);
   for (let row = 0; row < rows; row++) {
     const own = (matrix: Float64Array) => matrix.slice(row * dates, (row + 1) * dates);
-    const result = redNoiseTest(own(whole), own(banded), response);
+    const result = redNoiseTest(own(whole), own(banded), remembered);
     bandP[row] = result.bandP;
     meanP[row] = result.meanP;
   }
