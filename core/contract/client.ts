@@ -174,6 +174,7 @@ export function connectDoor(port: Port, options: ConnectOptions = {}): DoorConne
     velocities: (args, callOptions) => call("velocities", args, callOptions),
     jets: (args, callOptions) => call("jets", args, callOptions),
     eddyTest: (args, callOptions) => call("eddyTest", args, callOptions),
+    scales: (args, callOptions) => call("scales", args, callOptions),
     run: (args, callOptions) => call("run", args, callOptions),
     save: (args, callOptions) => call("save", args, callOptions),
   };

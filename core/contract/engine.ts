@@ -9,6 +9,7 @@ import type {
   SpectrumResult,
   SuppliedVelocityReport,
 } from "../model/results";
+import type { ScalesResult } from "../model/scales-result";
 import type { FileReport } from "../model/source";
 import type { Study } from "../study/schema";
 import type { CallOptions } from "./job";
@@ -131,6 +132,11 @@ export interface Engine {
     request: { readonly open: OpenStudy; readonly grid: string },
     options?: CallOptions,
   ): Promise<EddyTestResult>;
+  /** Spectra, lengths, drift, forcing and persistence; `latitude` chooses the row for waves and drift, the middle one if left out. */
+  scales(
+    request: { readonly open: OpenStudy; readonly grid: string; readonly latitude?: number },
+    options?: CallOptions,
+  ): Promise<ScalesResult>;
   /** Writes the result folder, whole or not at all. */
   run(
     request: { readonly open: OpenStudy; readonly folder: string; readonly overwrite: boolean },

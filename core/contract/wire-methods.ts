@@ -37,6 +37,7 @@ export const requestShapes: RequestShapes = {
   velocities: { open: "study", grid: "text" },
   jets: { open: "study", grid: "text" },
   eddyTest: { open: "study", grid: "text" },
+  scales: { open: "study", grid: "text", latitude: "number?" },
   run: { open: "study", folder: "text", overwrite: "flag" },
   save: { open: "study", path: "text" },
 };

@@ -1,6 +1,8 @@
 import { formatDay } from "../model/calendar";
 import { geometryOf } from "./geometry";
 import type { HeightRecord } from "./record";
+import { shortScaleChange } from "./scales/short-scale-change";
+import { aliasesInBand } from "./scales/tidal-aliases";
 import type { Study } from "./schema";
 
 export interface Caution {
@@ -8,18 +10,43 @@ export interface Caution {
   readonly text: string;
 }
 
-/** What gridded altimetry resolves at best: about 30 days and 150 to 200 km. Common practice, no source. */
-const resolvedDays = 30;
+/** Ratio of short-scale variance, last third to first, beyond which maps count as made from unlike data. Our choice, no source. */
+const unlikeRatio = 1.5;
 
 type Rule = (study: Study, record: HeightRecord) => string | null;
 
 const rules: Readonly<Record<string, Rule>> = {
   standing: () =>
     "Geostrophic part only: no wind drift, tides, inertial or wave-driven motion. Not for navigation or operations at sea; follow local rules and licensed practice.",
-  resolution: ({ band }) =>
-    band.filter !== "none" && (band.shortestDays ?? 0) < resolvedDays
-      ? `The band starts at ${band.shortestDays ?? 0} days; mapped heights hold little true signal below about ${resolvedDays} days and 150 to 200 km.`
+  resolution: ({ band, scales }) =>
+    band.filter !== "none" && (band.shortestDays ?? 0) < scales.resolvedDays
+      ? `The band starts at ${band.shortestDays ?? 0} days; mapped heights hold little true signal below about ${scales.resolvedDays} days and ${scales.resolvedKm} km.`
       : null,
+  resolutionInSpace: ({ space, scales }) => {
+    const below = [space.meridional, space.zonal].flatMap((side) =>
+      side && (side.shortestKm ?? 0) < scales.resolvedKm ? [side.shortestKm ?? 0] : [],
+    );
+    return below.length > 0
+      ? `The filter in space keeps wavelengths from ${Math.min(...below)} km; the mapping resolves about ${scales.resolvedKm} km.`
+      : null;
+  },
+  tides: ({ band, scales }) => {
+    if (band.filter === "none") return null;
+    const aliases = aliasesInBand(scales.repeatDays, band.shortestDays, band.longestDays);
+    const words = aliases.map(
+      ({ tide, repeatDays, periodDays }) =>
+        `${tide} ${periodDays.toFixed(1)} (repeat ${Number(repeatDays.toFixed(2))})`,
+    );
+    return words.length > 0
+      ? `What tides are left in the heights shows at these periods in the band, in days: ${words.join(", ")}.`
+      : null;
+  },
+  unlikeMaps: (_, record) => {
+    const ratio = shortScaleChange(record);
+    if (!(ratio > unlikeRatio || ratio < 1 / unlikeRatio)) return null;
+    const [word, factor] = ratio > 1 ? ["more", ratio] : ["less", 1 / ratio];
+    return `Scales below about 200 km hold ${factor.toFixed(1)} times ${word} variance in the last third of the record than in the first: the number of altimeters may have changed, and trends in eddies and jets may be its own.`;
+  },
   shortRecord: ({ band }, { time, cube }) => {
     const days = cube.dates * time.step;
     const { longestDays } = band;

@@ -15,6 +15,7 @@ import { Job } from "./job";
 import { latitudesResult } from "./latitudes";
 import { openStudy } from "./open-study";
 import { runStudy } from "./run/run-study";
+import { scalesResult } from "./scales";
 import { sourceFiles } from "./source-files";
 import { spectrumResult } from "./spectrum";
 import { suppliedVelocity } from "./supplied-velocity";
@@ -64,6 +65,7 @@ export function createEngine(options: { readonly workers?: number } = {}): Engin
     velocities: ({ open, grid }, call) => withJob(call, (job) => suppliedVelocity(workspace(), open, grid, job)),
     jets: ({ open, grid }, call) => withJob(call, (job) => jetsResult(workspace(), open, grid, job)),
     eddyTest: ({ open, grid }, call) => withJob(call, (job) => eddyTestResult(workspace(), open, grid, job)),
+    scales: (request, call) => withJob(call, (job) => scalesResult(workspace(), request, job)),
     run: (request, call) => withJob(call, (job) => runStudy(workspace(), request, job)),
     save: async ({ open, path }) => {
       await writeFileWhole(path, `${JSON.stringify(studyFrom(open, dirname(path)), null, 2)}\n`);
@@ -79,7 +81,13 @@ function studyFrom({ study, folder }: OpenStudy, target: string): Study {
     ...source,
     files: source.files.map((file) => relative(target, resolve(folder, file)).replaceAll("\\", "/")),
   });
-  return { ...study, grids: study.grids.map(moved), tracks: study.tracks.map(moved) };
+  const { deformation } = study.scales;
+  const table =
+    typeof deformation === "object" && "file" in deformation
+      ? { file: moved({ files: [deformation.file] }).files[0] }
+      : deformation;
+  const scales = { ...study.scales, deformation: table };
+  return { ...study, grids: study.grids.map(moved), tracks: study.tracks.map(moved), scales };
 }
 
 async function recognise(paths: readonly string[], job: Job): Promise<RecognisedFile[]> {

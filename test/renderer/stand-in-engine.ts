@@ -144,6 +144,7 @@ export function standInEngine(calls: string[] = []): Engine {
     },
     velocities: async () => null,
     jets: async () => ({}) as never,
+    scales: async () => ({}) as never,
     eddyTest: async () => ({}) as never,
     async spectrum({ quantity }) {
       await pause(20);

@@ -65,6 +65,8 @@ export function guardEngine(engine: Engine, grants: Grants): Engine {
     for (const source of [...read.data.grids, ...read.data.tracks]) {
       for (const pattern of source.files) await checkPattern(folder, pattern);
     }
+    const { deformation } = read.data.scales;
+    if (typeof deformation === "object" && "file" in deformation) await checkPattern(folder, deformation.file);
     return { study: read.data, folder, path: open.path };
   }
 
@@ -82,6 +84,7 @@ export function guardEngine(engine: Engine, grants: Grants): Engine {
     jets: async (request, options) => engine.jets({ ...request, open: await checkedStudy(request.open) }, options),
     eddyTest: async (request, options) =>
       engine.eddyTest({ ...request, open: await checkedStudy(request.open) }, options),
+    scales: async (request, options) => engine.scales({ ...request, open: await checkedStudy(request.open) }, options),
     run: async (request, options) => {
       const folder = await grants.writable(request.folder);
       return engine.run({ ...request, folder, open: await checkedStudy(request.open) }, options);

@@ -1,11 +1,13 @@
 import type { OpenStudy } from "../../../core/contract/engine";
 import type { Profile, SpectrumResult, SuppliedVelocityReport } from "../../../core/model/results";
+import type { ScalesResult } from "../../../core/model/scales-result";
 import { quantities } from "../../../core/ocean/quantities/index";
 import { meanProfile } from "../../../core/study/profile";
 import type { Job } from "../job";
 import { type FieldStages, fieldArguments, fieldStages, pictureSeries, type QuantityArguments } from "../latitudes";
 import type { LoadedRecord } from "../load-record";
 import type { WorkerPool } from "../pool";
+import { scalesResult } from "../scales";
 import { spectrumResult } from "../spectrum";
 import { suppliedVelocity } from "../supplied-velocity";
 import type { TaskResult } from "../tasks";
@@ -38,6 +40,7 @@ export interface Analysis {
   /** null for a study without a band. */
   readonly band: { readonly zonal: ZonalAnalysis; readonly moments: Moments } | null;
   readonly jets: JetsAnalysis;
+  readonly scales: ScalesResult;
   /** Standard errors from the study's height error; null where it names none. */
   readonly errors: TaskResult<"errorPlanes"> | null;
   /** null where the files supply no velocity. */
@@ -69,6 +72,7 @@ export async function analyse(workspace: Workspace, open: OpenStudy, job: Job): 
         }
       : null,
     jets: await analyseJets(workspace, open, grid, job),
+    scales: await scalesResult(workspace, { open, grid }, job),
     errors: await workspace.errors(open, grid, job),
     supplied: await suppliedVelocity(workspace, open, grid, job),
     spectrum: hasBand ? await spectrumResult(workspace, open, grid, "u", job) : null,

@@ -6,6 +6,7 @@ import { leastZonalCoverage } from "../../../core/study/reduction";
 import type { Study } from "../../../core/study/schema";
 import type { Analysis } from "./analysis";
 import { jetsMethods } from "./jets-methods";
+import { scalesMethods } from "./scales-methods";
 import { version } from "./version";
 
 /** methods.md: what was done, in sentences whose numbers are the study's own, with the papers to cite and the cautions. */
@@ -29,6 +30,7 @@ export function methodsText(analysis: Analysis): string {
     `Zonal means weight cells by their width and need ${100 * leastZonalCoverage} % of a row's ocean cells. The 95 % interval of a mean over time uses Student's t with the effective sample size ${study.band.filter === "none" ? "" : "(as it stands: "}N(1 − r)/(1 + r) from the lag-one autocorrelation r (Leith 1973)${study.band.filter === "none" ? "" : "; in the band: from the products of the autocorrelations over all lags, Bretherton et al. 1999)"}.`,
     "",
     ...jetsMethods(analysis.jets, study),
+    ...scalesMethods(analysis.scales, study),
     "## Cautions",
     "",
     ...cautions,

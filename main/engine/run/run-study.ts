@@ -16,6 +16,8 @@ import { jetsTable } from "./jets-table";
 import { writeLatitudeTime } from "./latitude-time-file";
 import { methodsText } from "./methods-text";
 import { profileTable } from "./profile-table";
+import { scalesTable } from "./scales-table";
+import { spectraTable } from "./spectra-table";
 import { summaryOf } from "./summary";
 
 /** Runs a study and writes its result folder, whole or not at all; an existing folder is refused before any work. */
@@ -43,6 +45,9 @@ export async function runStudy(
       await writeFileWhole(join(stage, "jets.csv"), jetsTable(analysis.jets.jets, analysis.jets.eddyTest, time));
       files.push("jets.csv");
     }
+    await writeFileWhole(join(stage, "scales.csv"), scalesTable(analysis.scales));
+    await writeFileWhole(join(stage, "spectra.csv"), spectraTable(analysis.scales));
+    files.push("scales.csv", "spectra.csv");
     await writeFileWhole(join(stage, "methods.md"), methodsText(analysis));
     files.push(...(await writeFigures(stage, analysis, workspace, job)));
     const inputs = await fingerprints(analysis.loaded.index, open.folder, () => job.throwIfCancelled());

@@ -6,6 +6,7 @@ import type { Moments } from "../tasks/moments";
 import { type Analysis, mappedQuantities } from "./analysis";
 import type { InputFile } from "./fingerprint";
 import { jetsSummary } from "./jets-summary";
+import { scalesSummary } from "./scales-summary";
 import { version } from "./version";
 
 export interface Quantified {
@@ -49,6 +50,7 @@ export function summaryOf(analysis: Analysis, inputs: readonly InputFile[], file
     headline: headlineOf(analysis),
     filter: filterOf(analysis),
     jets: jetsSummary(analysis.jets),
+    scales: scalesSummary(analysis.scales),
     errors: errorsOf(analysis),
     suppliedVelocity: suppliedOf(analysis),
     cautions: cautionsFor(open.study, record),

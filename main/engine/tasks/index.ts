@@ -12,6 +12,15 @@ import { pictureTask } from "./picture";
 import { readTask } from "./read";
 import { reduceTask } from "./reduce";
 import { rmsPlaneTask } from "./rms-plane";
+import { scaleAlongTask } from "./scale-along";
+import { scaleDriftTask } from "./scale-drift";
+import { scaleFlowTask } from "./scale-flow";
+import { scaleForcingTask } from "./scale-forcing";
+import { scaleMapsTask } from "./scale-maps";
+import { scaleMeanTask } from "./scale-mean";
+import { scalePersistenceTask } from "./scale-persistence";
+import { scaleSeriesTask } from "./scale-series";
+import { scaleSignsTask } from "./scale-signs";
 import { sectorSeriesTask } from "./sector-series";
 import { spectrumTask } from "./spectrum";
 import { velocitiesTask } from "./velocities";
@@ -33,6 +42,15 @@ export const tasks = {
   jets: jetsTask,
   eddyPopulation: eddyPopulationTask,
   eddyOceans: eddyOceansTask,
+  scaleFlow: scaleFlowTask,
+  scaleMaps: scaleMapsTask,
+  scaleMean: scaleMeanTask,
+  scaleSigns: scaleSignsTask,
+  scalePersistence: scalePersistenceTask,
+  scaleSeries: scaleSeriesTask,
+  scaleAlong: scaleAlongTask,
+  scaleDrift: scaleDriftTask,
+  scaleForcing: scaleForcingTask,
   errorPlanes: errorPlanesTask,
   rmsPlane: rmsPlaneTask,
   velocities: velocitiesTask,

@@ -104,6 +104,7 @@ export function createStandIn(steps = 3): StandIn {
     spectrum: async ({ quantity }) => ({ quantity }) as never,
     velocities: async () => null,
     jets: async () => ({}) as never,
+    scales: async () => ({}) as never,
     eddyTest: async () => ({}) as never,
     run: async (_request, options) => {
       note("run");
