@@ -12,6 +12,7 @@ import "./styles/base.css";
 import "./styles/controls.css";
 import "./styles/app.css";
 import "./styles/latitudes.css";
+import "./styles/settings.css";
 import "./styles/sources.css";
 
 /** Puts the app into `root`, its engine behind `door`. */

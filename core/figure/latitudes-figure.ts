@@ -11,7 +11,7 @@ import {
   pictureHeading,
   rowHeadingMarks,
 } from "./latitudes/headings";
-import type { FigureSize, LatitudesInput } from "./latitudes/input";
+import { type FigureSize, isFiltered, type LatitudesInput } from "./latitudes/input";
 import { latitudeTimeMarks, latitudeTimePanel } from "./latitudes/latitude-time-panel";
 import { type LatitudesLayout, latitudesLayout } from "./latitudes/layout";
 import { latitudeScale, mapMarks, mapPanel } from "./latitudes/map-panel";
@@ -93,7 +93,9 @@ function lowerMarks(
         place(spectrum),
         "Which periods to keep",
         [
-          `variance per unit of log period${unit}; dotted, what the filter keeps`,
+          ...(input.band.filter === "none"
+            ? []
+            : [`variance per unit of log period${unit}; dotted, what the filter keeps`]),
           `variance per unit of log period${unit}`,
           squared,
         ],
@@ -101,24 +103,21 @@ function lowerMarks(
         sizes,
       ),
       ...spectrumMarks(input, layout, spectrum, lower.bandLabelBase, theme),
-      ...inlineHeadingMarks(
-        "days",
-        place(days),
-        "Days with data",
-        bridgedDates(input).includes(1)
-          ? [
-              "gaps in red, low where the filter bridges them, its ends shaded",
-              "gaps in red, low if bridged",
-              "gaps in red",
-            ]
-          : ["gaps in red, shaded ends lose the long periods", "gaps in red, filter ends shaded", "gaps in red"],
-        theme,
-        sizes,
-      ),
+      ...inlineHeadingMarks("days", place(days), "Days with data", daysRemarks(input), theme, sizes),
       ...daysMarks(input, days, theme),
       ...noteMarks(input, days, size.height - 0.6 * layout.margin, theme, sizes),
     ],
   };
+}
+
+/** What the colours in the strip of days mean, the longest first. */
+function daysRemarks(input: LatitudesInput): string[] {
+  const least = "gaps in red";
+  if (!isFiltered(input)) return [least];
+  if (bridgedDates(input).includes(1)) {
+    return [`${least}, low where the filter bridges them, its ends shaded`, `${least}, low if bridged`, least];
+  }
+  return [`${least}, shaded ends lose the long periods`, `${least}, filter ends shaded`, least];
 }
 
 /** For people who cannot see the figure, and for the file's desc element. */

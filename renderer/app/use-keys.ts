@@ -1,5 +1,5 @@
 import { useEffect } from "react";
-import { type BandEdge, bandLimits, shownEdges, stepPeriod } from "../state/band-edges";
+import { type BandEdge, recordLimits, shownEdges, stepPeriod } from "../state/band-edges";
 import type { Bench } from "../state/bench";
 import { type KeyAction, type KeyPress, keyAction } from "../state/keys";
 
@@ -43,8 +43,7 @@ function perform(bench: Bench, action: KeyAction): void {
 function stepEdge(bench: Bench, edge: BandEdge, direction: 1 | -1): void {
   const { studies, record } = bench.store.getState();
   if (!studies || !record) return;
-  const step = Math.abs(record.time.step);
-  const edges = shownEdges(studies.present.study.band, bandLimits(step, step * record.time.values.length));
+  const edges = shownEdges(studies.present.study.band, recordLimits(record.time));
   bench.setEdge(edge, stepPeriod(edges[edge], direction), `key ${edge}`);
 }
 

@@ -1,6 +1,7 @@
 import { connectDoor, type DoorConnection } from "../../core/contract/client";
-import type { Engine } from "../../core/contract/engine";
+import type { Engine, EngineMethod } from "../../core/contract/engine";
 import type { Choice, Welcome } from "../../core/contract/wire";
+import { engineMethods } from "../../core/contract/wire-methods";
 import type { FaultData } from "../../core/model/errors";
 import type { Door } from "./door";
 
@@ -73,21 +74,15 @@ export function engineLink(door: Door): EngineLink {
 
 /** An Engine whose every call goes to whichever engine is there at that moment. */
 function forwarding(current: () => Engine | null): Engine {
-  const now = (): Engine => {
-    const engine = current();
-    if (!engine) throw notConnected;
-    return engine;
-  };
-  return {
-    open: async (request, options) => now().open(request, options),
-    describe: async (request, options) => now().describe(request, options),
-    check: async (request, options) => now().check(request, options),
-    load: async (request, options) => now().load(request, options),
-    latitudes: async (request, options) => now().latitudes(request, options),
-    spectrum: async (request, options) => now().spectrum(request, options),
-    run: async (request, options) => now().run(request, options),
-    save: async (request, options) => now().save(request, options),
-  };
+  const forward =
+    (method: EngineMethod) =>
+    async (request: unknown, options: unknown): Promise<unknown> => {
+      const engine = current();
+      if (!engine) throw notConnected;
+      return (engine[method] as (request: unknown, options: unknown) => Promise<unknown>)(request, options);
+    };
+  // The list holds every method of the contract, or the contract would not compile.
+  return Object.fromEntries(engineMethods.map((method) => [method, forward(method)])) as unknown as Engine;
 }
 
 const notConnected: FaultData = {

@@ -1,7 +1,16 @@
+interface Choice<Value extends string> {
+  readonly value: Value;
+  readonly title: string;
+}
+
 interface SelectProps<Value extends string> {
   readonly label: string;
   readonly value: Value;
-  readonly choices: readonly { readonly value: Value; readonly title: string }[];
+  /** Choices, or choices under headings. */
+  readonly choices: readonly (
+    | Choice<Value>
+    | { readonly heading: string; readonly choices: readonly Choice<Value>[] }
+  )[];
   readonly onChoose: (value: Value) => void;
   readonly disabled?: boolean;
 }
@@ -15,11 +24,23 @@ export function Select<Value extends string>({ label, value, choices, onChoose, 
       disabled={disabled}
       onChange={(event) => onChoose(event.target.value as Value)}
     >
-      {choices.map((choice) => (
-        <option key={choice.value} value={choice.value}>
-          {choice.title}
-        </option>
-      ))}
+      {choices.map((choice) =>
+        "heading" in choice ? (
+          <optgroup key={choice.heading} label={choice.heading}>
+            {choice.choices.map(option)}
+          </optgroup>
+        ) : (
+          option(choice)
+        ),
+      )}
     </select>
+  );
+}
+
+function option<Value extends string>({ value, title }: Choice<Value>) {
+  return (
+    <option key={value} value={value}>
+      {title}
+    </option>
   );
 }

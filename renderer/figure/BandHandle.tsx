@@ -5,6 +5,8 @@ import { type BandEdge, stepPeriod } from "../state/band-edges";
 interface BandHandleProps {
   readonly edge: BandEdge;
   readonly days: number;
+  /** Nothing is taken off on this side; moving the handle closes it. */
+  readonly isOpen: boolean;
   readonly range: readonly [number, number];
   readonly panel: PanelFrame;
   /** Pixel of the edge. */
@@ -19,21 +21,30 @@ interface BandHandleProps {
   readonly onEnd: () => void;
 }
 
+/** Pixels before a handle that is pulled closes an open side: a click alone must not. */
+const leastPull = 4;
+
 const names = { shortestDays: "Shortest period kept", longestDays: "Longest period kept" } as const;
 
 /** One end of the pass band: dragged with the pointer or moved with the arrow keys. */
-export function BandHandle({ edge, days, range, panel, x, gripY, crowded, daysAt, onMove, onEnd }: BandHandleProps) {
+export function BandHandle(props: BandHandleProps) {
+  const { edge, days, isOpen, range, panel, x, gripY, crowded, daysAt, onMove, onEnd } = props;
   /** Pointer offset and scale at the grab: the axis may widen under a moving edge, which must not feed back. */
-  const grab = useRef<{ readonly offset: number; readonly daysAt: (x: number) => number } | null>(null);
+  const grab = useRef<{
+    readonly from: number;
+    readonly offset: number;
+    readonly daysAt: (x: number) => number;
+  } | null>(null);
 
   const onPointerDown = (event: PointerEvent<SVGGElement>): void => {
     if (event.button !== 0) return;
     event.currentTarget.setPointerCapture(event.pointerId);
     event.currentTarget.focus();
-    grab.current = { offset: event.clientX - x, daysAt };
+    grab.current = { from: event.clientX, offset: event.clientX - x, daysAt };
   };
   const onPointerMove = (event: PointerEvent<SVGGElement>): void => {
-    if (grab.current) onMove(grab.current.daysAt(event.clientX - grab.current.offset));
+    if (!grab.current || (isOpen && Math.abs(event.clientX - grab.current.from) < leastPull)) return;
+    onMove(grab.current.daysAt(event.clientX - grab.current.offset));
   };
   const release = (): void => {
     if (!grab.current) return;
@@ -58,7 +69,7 @@ export function BandHandle({ edge, days, range, panel, x, gripY, crowded, daysAt
       aria-valuemin={range[0]}
       aria-valuemax={range[1]}
       aria-valuenow={days}
-      aria-valuetext={`${days} days`}
+      aria-valuetext={isOpen ? "open" : `${days} days`}
       onPointerDown={onPointerDown}
       onPointerMove={onPointerMove}
       onPointerUp={release}

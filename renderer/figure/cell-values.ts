@@ -8,14 +8,18 @@ export function rowAt({ record }: Picture, latitude: number): number {
   return values[values.length - 1] >= values[0] ? index : values.length - 1 - index;
 }
 
-/** The map's value in SI units at a place (NaN: no data), the cell's own coordinates and whether it ever holds a value. */
+/**
+ * The map's value in SI units at a place (NaN: no data) with its standard error where there is one, the cell's own
+ * coordinates and whether it ever holds a value.
+ */
 export function mapValueAt(picture: Picture, latitude: number, longitude: number) {
-  const { map } = picture.result;
+  const { map, error } = picture.result;
   const { values: longitudes } = picture.record.longitude;
   const column = nearestIndex(longitudes, longitude);
   const cell = rowAt(picture, latitude) * map.columns + column;
   return {
     value: map.values[cell],
+    standardError: error?.map.values[cell],
     isOcean: picture.record.ocean[cell] === 1,
     latitude: picture.record.latitude.values[nearestIndex(picture.record.latitude.values, latitude)],
     longitude: longitudes[column],

@@ -29,6 +29,37 @@ export function shownEdges(
   return { shortestDays: band.shortestDays ?? limits.leastDays, longestDays: band.longestDays ?? limits.mostDays };
 }
 
+/** What an edge is set to where nothing better is known, in days: the study's own defaults. */
+const usualDays: BandEdges = { shortestDays: 90, longestDays: 540 };
+
+/** The band with one open side closed: at its usual period, or as near to that as limits and the other edge allow. */
+export function closeSide<Band extends { readonly shortestDays: number | null; readonly longestDays: number | null }>(
+  band: Band,
+  edge: BandEdge,
+  limits: BandLimits,
+): Band {
+  return moveEdge(band, edge, usualDays[edge], limits);
+}
+
+/** The band with both edges brought inside the limits; an open side stays open. */
+export function fitBand<Band extends { readonly shortestDays: number | null; readonly longestDays: number | null }>(
+  band: Band,
+  { leastDays, mostDays }: BandLimits,
+): Band {
+  const longestDays = band.longestDays && Math.min(mostDays, Math.max(leastDays + 1, band.longestDays));
+  const highest = longestDays === null ? mostDays : longestDays - 1;
+  const shortestDays = band.shortestDays && Math.max(leastDays, Math.min(highest, band.shortestDays));
+  return shortestDays === band.shortestDays && longestDays === band.longestDays
+    ? band
+    : { ...band, shortestDays, longestDays };
+}
+
+/** Limits for a record's time axis; those of two days for a record of one date. */
+export function recordLimits(time: { readonly step: number; readonly values: ArrayLike<number> }): BandLimits {
+  const step = Math.abs(time.step) || 1;
+  return bandLimits(step, step * time.values.length);
+}
+
 /** Range that one edge may move in while the other stays: whole days, the edges at least a day apart. */
 export function edgeRange(edges: BandEdges, edge: BandEdge, limits: BandLimits): readonly [number, number] {
   if (edge === "shortestDays") return [limits.leastDays, Math.max(limits.leastDays, Math.ceil(edges.longestDays) - 1)];

@@ -13,6 +13,7 @@ import type { LinkState } from "../bridge/engine-link";
 import type { Cursor } from "./cursor";
 import type { History } from "./history";
 import type { Notice } from "./notices";
+import type { Comparison } from "./velocities";
 
 /** A result together with the study and record it came from, so that what is drawn is always of one piece. */
 export interface Picture {
@@ -42,8 +43,18 @@ export interface BenchState {
   readonly cautions: readonly Caution[];
   readonly picture: Picture | null;
   readonly spectrum: SpectrumResult | null;
+  /** Why the record has no spectrum, as a sentence; empty where it has one. */
+  readonly noSpectrum: string;
+  /** Rows blended across the equator; follow the settings as the cautions do. */
+  readonly blendedRows: Uint8Array | null;
+  /** The last comparison of supplied velocities with ours. */
+  readonly comparison: Comparison | null;
+  /** A comparison under way. */
+  readonly comparing: Progress | null;
   /** The picture is behind what was asked for. */
   readonly computing: boolean;
+  /** Where that computing stands, once it tells. */
+  readonly computingStep: Progress | null;
   /** Opening and reading; null when nothing is under way. */
   readonly loading: Progress | null;
   /** Why there is no record, as a sentence; null while all is well. */
@@ -53,6 +64,8 @@ export interface BenchState {
   /** Most columns the latitude-time picture can show. */
   readonly columns: number;
   readonly keysShown: boolean;
+  /** Ids of the settings sections that are open. */
+  readonly openSections: readonly string[];
   /** Paths typed to be opened; kept while the view changes, so that a slip can be mended. */
   readonly pathsText: string;
 }
@@ -73,13 +86,19 @@ export const firstState: BenchState = {
   cautions: [],
   picture: null,
   spectrum: null,
+  noSpectrum: "",
+  blendedRows: null,
+  comparison: null,
+  comparing: null,
   computing: false,
+  computingStep: null,
   loading: null,
   loadFault: null,
   writing: null,
   notices: [],
   columns: 600,
   keysShown: false,
+  openSections: [],
   pathsText: "",
 };
 

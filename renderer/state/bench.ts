@@ -1,7 +1,7 @@
 import { createStore, type StoreApi } from "zustand/vanilla";
 import type { FieldChoice, OpenStudy } from "../../core/contract/engine";
 import type { EngineLink } from "../bridge/engine-link";
-import { type BandEdge, bandLimits, moveEdge } from "./band-edges";
+import { type BandEdge, moveEdge, recordLimits } from "./band-edges";
 import { type BenchState, type BenchStore, firstState } from "./bench-state";
 import { clampIndex, stepLatitude } from "./cursor";
 import { type Drafts, throttled } from "./draft";
@@ -12,12 +12,14 @@ import { type Loader, loader } from "./loader";
 import { addNotice, engineStopped, noticeFromError } from "./notices";
 import { player } from "./player";
 import { type Results, results } from "./results";
+import { type Velocities, velocities } from "./velocities";
 
 /** The store and everything a person can do with it. */
 export interface Bench {
   readonly store: StoreApi<BenchState>;
   readonly loader: Loader;
   readonly results: Results;
+  readonly velocities: Velocities;
   readonly link: EngineLink;
   set(change: Partial<BenchState>): void;
   /** Makes `next` the present study; changes of one gesture are one step of undo. */
@@ -58,6 +60,7 @@ export function createBench(link: EngineLink, drafts: Drafts): Bench {
   const drawn = fields(store, link.engine, fail);
   const reading = loader({ store, engine: link.engine, drafts, fail, tell, loaded: () => drawn.refresh() });
   const writing = results(store, link.engine, drafts, tell);
+  const comparing = velocities(store, link.engine, fail);
 
   const setDate = (index: number): void => {
     const { cursor, record } = store.get();
@@ -129,6 +132,7 @@ export function createBench(link: EngineLink, drafts: Drafts): Bench {
     store: zustand,
     loader: reading,
     results: writing,
+    velocities: comparing,
     link,
     set: store.set,
     edit: (next, gesture) => change((studies) => commit(studies, next, gesture ?? null)),
@@ -159,9 +163,7 @@ export function createBench(link: EngineLink, drafts: Drafts): Bench {
       const { studies, record } = store.get();
       if (!studies || !record) return;
       const open = studies.present;
-      const step = Math.abs(record.time.step);
-      const limits = bandLimits(step, step * record.time.values.length);
-      const band = moveEdge(open.study.band, edge, days, limits);
+      const band = moveEdge(open.study.band, edge, days, recordLimits(record.time));
       change((history) => commit(history, withBand(open, band), gesture ?? null));
     },
     togglePlay: () => playing.toggle(),

@@ -1,5 +1,13 @@
 import type { OpenStudy } from "../../core/contract/engine";
-import type { BackgroundSettings, BandSettings, GeostrophySettings, Period, Region } from "../../core/study/schema";
+import type {
+  BackgroundSettings,
+  BandSettings,
+  ErrorSettings,
+  GeostrophySettings,
+  Period,
+  Region,
+  SpaceSettings,
+} from "../../core/study/schema";
 
 /** Each returns a new study with one part replaced; the one given is left as it was. */
 export function withBand(open: OpenStudy, band: BandSettings): OpenStudy {
@@ -12,6 +20,14 @@ export function withGeostrophy(open: OpenStudy, change: Partial<GeostrophySettin
 
 export function withBackground(open: OpenStudy, change: Partial<BackgroundSettings>): OpenStudy {
   return { ...open, study: { ...open.study, background: { ...open.study.background, ...change } } };
+}
+
+export function withSpace(open: OpenStudy, change: Partial<SpaceSettings>): OpenStudy {
+  return { ...open, study: { ...open.study, space: { ...open.study.space, ...change } } };
+}
+
+export function withErrors(open: OpenStudy, change: Partial<ErrorSettings>): OpenStudy {
+  return { ...open, study: { ...open.study, errors: { ...open.study.errors, ...change } } };
 }
 
 /** `undefined` takes the part out: all of the first grid. */

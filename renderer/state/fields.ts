@@ -2,6 +2,7 @@ import type { Engine, LatitudesResult, OpenStudy, RecordOverview, SpectrumResult
 import type { BenchStore } from "./bench-state";
 import { recordKey } from "./edit-study";
 import { latestWins } from "./latest-wins";
+import { isFaultData } from "./notices";
 
 /** Keeps the drawn results in step with study, field choice and date. */
 export interface Fields {
@@ -17,6 +18,9 @@ interface LatitudesQuestion {
   readonly request: Parameters<Engine["latitudes"]>[0];
 }
 
+/** A picture while dragging comes well within this; what takes longer is not worth finishing for a setting that has gone. */
+const patienceMs = 1500;
+
 /** One queue for the latitudes, one for the spectrum; each keeps at most one call in flight. */
 export function fields(store: BenchStore, engine: Engine, fail: (error: unknown) => void): Fields {
   let asked = "";
@@ -27,7 +31,14 @@ export function fields(store: BenchStore, engine: Engine, fail: (error: unknown)
   let cautionedRecord: RecordOverview | null = null;
 
   const latitudes = latestWins<LatitudesQuestion, LatitudesResult>({
-    run: ({ request }, signal) => engine.latitudes(request, { signal }),
+    patienceMs,
+    run: ({ request }, signal) =>
+      engine.latitudes(request, {
+        signal,
+        onProgress: (step) => {
+          if (!signal.aborted) store.set({ computingStep: step });
+        },
+      }),
     deliver: (result, { open, record, request }) => {
       if (record === store.get().record) store.set({ picture: { open, grid: request.grid, record, result } });
     },
@@ -35,22 +46,34 @@ export function fields(store: BenchStore, engine: Engine, fail: (error: unknown)
       asked = "";
       fail(error);
     },
-    onBusy: (computing) => store.set({ computing }),
+    onBusy: (computing) => store.set({ computing, computingStep: null }),
   });
 
   const spectrum = latestWins<Parameters<Engine["spectrum"]>[0], SpectrumResult>({
+    patienceMs,
     run: (request, signal) => engine.spectrum(request, { signal }),
-    deliver: (result) => store.set({ spectrum: result }),
+    deliver: (result) => {
+      const isWhole = result.segments > 0;
+      const noSpectrum = `No spectrum: gaps leave no ${Math.round(result.segmentDays)} days in a row.`;
+      store.set({ spectrum: isWhole ? result : null, noSpectrum: isWhole ? "" : noSpectrum });
+    },
     fail: (error) => {
+      const missing = missingSpectrum(error);
+      if (missing !== null) {
+        store.set({ spectrum: null, noSpectrum: missing });
+        return;
+      }
       askedSpectrum = "";
       fail(error);
     },
   });
 
   const cautions = latestWins<Parameters<Engine["load"]>[0], RecordOverview>({
+    patienceMs,
     run: (request, signal) => engine.load(request, { signal }),
     deliver: (overview, { open }) => {
-      if (open === store.get().studies?.present) store.set({ cautions: overview.cautions });
+      if (open !== store.get().studies?.present) return;
+      store.set({ cautions: overview.cautions, blendedRows: overview.blendedRows });
     },
     fail,
   });
@@ -107,8 +130,13 @@ export function fields(store: BenchStore, engine: Engine, fail: (error: unknown)
   };
 }
 
-/** What a spectrum depends on: everything but the band, so that dragging an edge does not ask for it again. */
+/** A record that cannot have a spectrum is no fault of the person's: a sentence for its panel; null for other errors. */
+function missingSpectrum(error: unknown): string | null {
+  return isFaultData(error) && error.where === "spectrum" ? `No spectrum: it takes ${error.expected}.` : null;
+}
+
+/** What a spectrum may depend on: not on band or errors, so that dragging an edge does not ask for it again. */
 function spectrumKey(open: OpenStudy, grid: string, quantity: string): string {
-  const { grids, region, period, geostrophy, background } = open.study;
-  return JSON.stringify([open.folder, grids, region, period, geostrophy, background, grid, quantity]);
+  const { band: _band, errors: _errors, outputs: _outputs, title: _title, ...rest } = open.study;
+  return JSON.stringify([open.folder, rest, grid, quantity]);
 }

@@ -73,7 +73,8 @@ export function loader({ store, engine, drafts, fail, tell, loaded }: LoaderPart
     if (running !== controller) return;
     const before = store.get();
     const cursor = fitCursor(before.cursor, before.record, record);
-    store.set({ record, recordFor: key, cautions: record.cautions, cursor });
+    const { cautions, blendedRows } = record;
+    store.set({ record, recordFor: key, cautions, blendedRows, cursor });
     loaded();
   };
 
@@ -105,6 +106,7 @@ export function loader({ store, engine, drafts, fail, tell, loaded }: LoaderPart
           record: null,
           picture: null,
           spectrum: null,
+          noSpectrum: "",
           cursor: null,
         });
         if (draft)

@@ -1,47 +1,22 @@
 import type { RecordOverview } from "../../core/contract/engine";
-import {
-  decimalsForStep,
-  formatCount,
-  formatLatitudeRange,
-  formatLongitudeRange,
-  formatNumber,
-  formatSignificant,
-} from "../../core/figure/format";
-import { cellEdges } from "../../core/figure/resample";
+import { decimalsForStep, formatCount, formatNumber } from "../../core/figure/format";
+import { boxText, gridText } from "../../core/figure/record-text";
 import { formatDate } from "../../core/figure/time-ticks";
-
 import type { Study } from "../../core/study/schema";
 
 type RecordAxes = Pick<RecordOverview, "latitude" | "longitude" | "time">;
 
-/** A record in a line: "20–41° N, 150–125° W, 900 days". */
+/** A record in a line: "20–41° N, 150–125° W · 900 days". */
 export function recordText(record: RecordAxes): string {
   const { time } = record;
   const days = Math.round(time.values.length * Math.abs(time.step || 1));
-  return `${boxText(record)} · ${formatCount(days)} days`;
+  return `${boxText(record)} · ${formatCount(days)} ${days === 1 ? "day" : "days"}`;
 }
 
-/** A record's region by the outer edges of its cells: "20–41° N, 150–125° W". */
-export function boxText({ latitude, longitude }: Pick<RecordAxes, "latitude" | "longitude">): string {
-  return `${formatLatitudeRange(...edges(latitude.values))}, ${formatLongitudeRange(...edges(longitude.values))}`;
-}
-
-function edges(values: Float64Array): [number, number] {
-  const [first, last] = cellEdges(values);
-  return first <= last ? [first, last] : [last, first];
-}
-
-/** A grid's name with its spacing and sampling: "Grid A · 0.125° · 3 d". */
-export function gridText(study: Study, id: string, record: RecordAxes | null): string {
-  const label = study.grids.find((grid) => grid.id === id)?.label ?? "";
-  const name = label === "" ? `Grid ${id}` : label;
-  if (!record) return name;
-  const degrees = Math.abs(record.latitude.step);
-  const days = Math.abs(record.time.step);
-  const parts = [name];
-  if (degrees > 0) parts.push(`${formatSignificant(degrees, 3)}°`);
-  if (days > 0) parts.push(`${formatSignificant(days, 3)} d`);
-  return parts.join(" · ");
+/** A grid's label, with its spacing and sampling once they are known: "Grid A · 0.125° · 3 d". */
+export function gridTitle(study: Study, id: string, record: RecordAxes | null): string {
+  const name = study.grids.find((grid) => grid.id === id)?.label || `Grid ${id}`;
+  return record ? gridText(name, record) : name;
 }
 
 /** First and last date of a time axis and how many there are. */

@@ -12,6 +12,9 @@ function spokenUnits(text: string): string {
     .replace(/−(?=[\d.])/g, "minus ")
     .replace("±", "plus or minus")
     .replace("10⁻⁶ s⁻¹", "millionths per second")
+    .replace("10⁻¹²", "million millionths")
+    .replace(" m⁻¹", " per metre")
     .replace(" s⁻¹", " per second")
+    .replace(" s⁻²", " per second squared")
     .replace(/\bcm\b/, "centimetres");
 }

@@ -1,5 +1,6 @@
 import { displayUnits } from "../../core/figure/display-units";
 import { formatNumber } from "../../core/figure/format";
+import { errorsWithin95 } from "../../core/figure/latitudes/doubtful-cells";
 
 /** How values of one field are written: the same decimals everywhere, so that they do not jump while a person moves. */
 export interface ValueStyle {
@@ -21,9 +22,16 @@ export function valueText(style: ValueStyle, value: number): string {
   return Number.isFinite(value) ? withUnits(formatNumber(value * style.scale, style.digits), style.units) : "no data";
 }
 
-/** A value with the half width of its interval; NaN reads "too few cells". */
+/** A value with what 95 % of its errors lie within; the value alone where its standard error is not known. */
+export function doubtText(style: ValueStyle, value: number, standardError: number | undefined): string {
+  if (standardError === undefined || !Number.isFinite(standardError) || !Number.isFinite(value))
+    return valueText(style, value);
+  return intervalText(style, value, errorsWithin95 * standardError);
+}
+
+/** A value with the half width of its interval, a dash where that is not known; a missing value reads "no data". */
 export function intervalText(style: ValueStyle, mean: number, half: number): string {
-  if (!Number.isFinite(mean) || !Number.isFinite(half)) return "too few cells";
+  if (!Number.isFinite(mean)) return "no data";
   const parts = [mean, half].map((part) => formatNumber(part * style.scale, style.digits));
   return withUnits(parts.join(" ± "), style.units);
 }

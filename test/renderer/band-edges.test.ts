@@ -2,7 +2,15 @@ import fc from "fast-check";
 import { describe, expect, test } from "vitest";
 import { valueAtX } from "../../core/figure/panel";
 import type { PanelFrame } from "../../core/figure/scene";
-import { bandLimits, edgeRange, moveEdge, stepPeriod } from "../../renderer/state/band-edges";
+import {
+  bandLimits,
+  closeSide,
+  edgeRange,
+  fitBand,
+  moveEdge,
+  recordLimits,
+  stepPeriod,
+} from "../../renderer/state/band-edges";
 
 const band = { shortestDays: 90, longestDays: 540, filter: "lanczos" as const };
 const limits = bandLimits(3, 900);
@@ -81,5 +89,32 @@ describe("keys move an edge along a ladder of periods", () => {
         expect(stepPeriod(days, -1)).toBeLessThan(days);
       }),
     );
+  });
+});
+
+describe("open sides", () => {
+  const limits = { leastDays: 6, mostDays: 900 };
+
+  test("closing a side sets its usual period, or the nearest that limits and the other edge allow", () => {
+    expect(closeSide({ shortestDays: null, longestDays: 540 }, "shortestDays", limits).shortestDays).toBe(90);
+    expect(closeSide({ shortestDays: null, longestDays: 60 }, "shortestDays", limits).shortestDays).toBe(59);
+    expect(closeSide({ shortestDays: 90, longestDays: null }, "longestDays", { leastDays: 6, mostDays: 200 })).toEqual({
+      shortestDays: 90,
+      longestDays: 200,
+    });
+  });
+
+  test("a band is brought inside the limits of a record, its open sides left open", () => {
+    const short = { leastDays: 6, mostDays: 200 };
+    expect(fitBand({ shortestDays: 90, longestDays: 540 }, short)).toEqual({ shortestDays: 90, longestDays: 200 });
+    expect(fitBand({ shortestDays: 300, longestDays: null }, short)).toEqual({ shortestDays: 200, longestDays: null });
+    expect(fitBand({ shortestDays: 2, longestDays: 4 }, short)).toEqual({ shortestDays: 6, longestDays: 7 });
+    const fits = { shortestDays: null, longestDays: 100 };
+    expect(fitBand(fits, short)).toBe(fits);
+  });
+
+  test("a record of one date has limits all the same", () => {
+    const { leastDays, mostDays } = recordLimits({ step: Number.NaN, values: [0] });
+    expect(mostDays).toBeGreaterThan(leastDays);
   });
 });

@@ -8,7 +8,7 @@ import { engineLink } from "../../renderer/bridge/engine-link";
 import { createBench } from "../../renderer/state/bench";
 import type { BenchState } from "../../renderer/state/bench-state";
 import { drafts } from "../../renderer/state/draft";
-import { withExtent, withGeostrophy } from "../../renderer/state/edit-study";
+import { withErrors, withExtent, withGeostrophy, withSpace } from "../../renderer/state/edit-study";
 import { standInEngine, standInStudy } from "./stand-in-engine";
 
 const region = { west: -140, east: -130, south: 25, north: 35 };
@@ -192,6 +192,77 @@ describe("the bench", () => {
     if (!open) throw new Error("no study is open");
     bench.edit(withGeostrophy(open, { stencil: 3 }));
     await until((now) => now.cautions[0]?.text === "3 points");
+  });
+
+  test("a record without a spectrum is told in its panel, not as a fault, and is not asked again for every date", async () => {
+    const { bench, calls, state, until, atRest } = makeBench((engine) => ({
+      spectrum: async () => {
+        calls.push("spectrum");
+        throw new Fault({
+          tag: "period",
+          where: "spectrum",
+          expected: "at least 16 dates an even step apart",
+          got: "1 date",
+          advice: "choose a longer period",
+        });
+      },
+      latitudes: engine.latitudes,
+    }));
+    await until((now) => now.noSpectrum !== "");
+    await atRest();
+    expect(state().noSpectrum).toBe("No spectrum: it takes at least 16 dates an even step apart.");
+    bench.stepDate(1);
+    await atRest();
+    expect(calls.filter((call) => call === "spectrum")).toHaveLength(1);
+    expect(state().notices).toEqual([]);
+  });
+
+  test("a spectrum of which no segment is whole counts as none", async () => {
+    const { state, until } = makeBench((engine) => ({
+      spectrum: async (request, options) => ({ ...(await engine.spectrum(request, options)), segments: 0 }),
+    }));
+    await until((now) => now.noSpectrum !== "");
+    expect(state().noSpectrum).toBe("No spectrum: gaps leave no 300 days in a row.");
+    expect(state().spectrum).toBeNull();
+  });
+
+  test("filters in space ask for another spectrum, errors do not", async () => {
+    const { bench, calls, state, until, atRest } = makeBench((engine) => ({
+      spectrum: async (request, options) => {
+        calls.push("spectrum");
+        return engine.spectrum(request, options);
+      },
+    }));
+    await until((now) => now.spectrum !== null);
+    await atRest();
+    const present = () => {
+      const open = state().studies?.present;
+      if (!open) throw new Error("no study is open");
+      return open;
+    };
+    const count = () => calls.filter((call) => call === "spectrum").length;
+    bench.edit(withErrors(present(), { heightMetres: 0.02 }));
+    await atRest();
+    expect(count()).toBe(1);
+    bench.edit(withSpace(present(), { removeZonalMean: true }));
+    await atRest();
+    expect(count()).toBe(2);
+  });
+
+  test("rows of the equatorial blend follow the settings", async () => {
+    const { bench, state, until, atRest } = makeBench((engine) => ({
+      load: async (request, options) => {
+        const record = await engine.load(request, options);
+        const isBlend = request.open.study.geostrophy.equator === "blend";
+        return { ...record, blendedRows: record.blendedRows.map(() => (isBlend ? 1 : 0)) };
+      },
+    }));
+    await atRest();
+    expect(state().blendedRows).not.toContain(1);
+    const open = state().studies?.present;
+    if (!open) throw new Error("no study is open");
+    bench.edit(withGeostrophy(open, { equator: "blend" }));
+    await until((now) => now.blendedRows?.[0] === 1);
   });
 
   test("playing goes through every date in order and stops at the last", async () => {

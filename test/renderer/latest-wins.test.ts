@@ -17,11 +17,12 @@ function manualCalls() {
 const settled = (): Promise<void> => new Promise((resolve) => setTimeout(resolve));
 
 describe("a queue in which the latest request wins", () => {
-  function queue() {
+  function queue(patienceMs?: number) {
     const { started, run } = manualCalls();
     const delivered: string[] = [];
     const failed: unknown[] = [];
     const queued = latestWins<number, string>({
+      ...(patienceMs === undefined ? {} : { patienceMs }),
       run,
       deliver: (result) => delivered.push(result),
       fail: (error) => failed.push(error),
@@ -77,5 +78,35 @@ describe("a queue in which the latest request wins", () => {
     started[1].answer("new");
     await settled();
     expect(delivered).toEqual(["new"]);
+  });
+
+  test("a request that outlasts the patience is aborted once another waits, and its late answer is not shown", async () => {
+    const { started, delivered, failed, queued } = queue(20);
+    queued.ask(1);
+    await new Promise((resolve) => setTimeout(resolve, 40));
+    // Nothing waits: it may take as long as it likes.
+    expect(started[0].signal.aborted).toBe(false);
+    queued.ask(2);
+    await new Promise((resolve) => setTimeout(resolve, 10));
+    expect(started[0].signal.aborted).toBe(true);
+    expect(started.map((call) => call.request)).toEqual([1, 2]);
+    started[0].refuse(new Error("aborted"));
+    started[1].answer("two");
+    await settled();
+    expect(delivered).toEqual(["two"]);
+    expect(failed).toEqual([]);
+    expect(queued.busy).toBe(false);
+  });
+
+  test("a request that is done within the patience is shown although another waits", async () => {
+    const { started, delivered, queued } = queue(1000);
+    queued.ask(1);
+    queued.ask(2);
+    started[0].answer("one");
+    await settled();
+    started[1].answer("two");
+    await settled();
+    expect(delivered).toEqual(["one", "two"]);
+    expect(started[0].signal.aborted).toBe(false);
   });
 });

@@ -1,8 +1,9 @@
 import { describe, expect, test } from "vitest";
+import { makeAxis, makeTimeAxis } from "../../core/model/axis";
 import { joinPath, pathsFromText } from "../../renderer/state/paths";
-import { bytesText } from "../../renderer/text/record";
+import { bytesText, recordText } from "../../renderer/text/record";
 import { spokenCursor } from "../../renderer/text/spoken";
-import { intervalText, valueStyle, valueText } from "../../renderer/text/values";
+import { doubtText, intervalText, valueStyle, valueText } from "../../renderer/text/values";
 import { coverageBars } from "../../renderer/views/sources/CoverageBar";
 import { shortened } from "../../renderer/views/sources/Facts";
 
@@ -16,7 +17,22 @@ describe("values in words", () => {
 
   test("a missing value says so and is never a number", () => {
     expect(valueText(style, Number.NaN)).toBe("no data");
-    expect(intervalText(style, 0.1, Number.NaN)).toBe("too few cells");
+    expect(intervalText(style, Number.NaN, 0.1)).toBe("no data");
+    expect(intervalText(style, 0.1, Number.NaN)).toBe("10.0 ± – cm s⁻¹");
+  });
+
+  test("a value with a known error shows what 95 % of such errors lie within", () => {
+    expect(doubtText(style, 0.1, 0.01)).toBe("10.0 ± 2.0 cm s⁻¹");
+    expect(doubtText(style, 0.1, undefined)).toBe("10.0 cm s⁻¹");
+    expect(doubtText(style, 0.1, Number.NaN)).toBe("10.0 cm s⁻¹");
+    expect(doubtText(style, Number.NaN, 0.01)).toBe("no data");
+  });
+
+  test("a record of one date lasts a day, not days", () => {
+    const [latitude, longitude] = [makeAxis("latitude", [20, 21], ""), makeAxis("longitude", [0, 1], "")];
+    const lasting = (days: number[]) => recordText({ latitude, longitude, time: makeTimeAxis(days, "standard", "") });
+    expect(lasting([100])).toMatch(/ · 1 day$/);
+    expect(lasting([100, 103])).toMatch(/ · 6 days$/);
   });
 
   test("a limit of zero or none still gives a style", () => {

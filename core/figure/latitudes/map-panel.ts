@@ -49,7 +49,7 @@ function rasterCells(
 }
 
 /** Distance of hatch lines along a row, in small type sizes: close enough for a lone cell, far enough to see the colour. */
-const hatchSpacing = 0.5;
+const hatchSpacing = 0.6;
 
 /** The map on the date: sharp cells, land and missing values in their own greys, values within their error hatched. */
 export function mapMarks(

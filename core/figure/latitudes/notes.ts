@@ -12,8 +12,8 @@ import type { TypeSizes } from "./layout";
 const lineShare = 1.6;
 
 /**
- * Under the days with data: what the greys and the amber mean, how many dates hold data, where the numbers come from. Only
- * as many lines as fit above `bottom`.
+ * Under the days with data: what signs, greys and amber mean, how many dates hold data, where the numbers come from. Only as
+ * many lines as fit above `bottom`: what every note must say first, then the legend, then the rest of the notes.
  */
 export function noteMarks(
   input: LatitudesInput,
@@ -26,30 +26,45 @@ export function noteMarks(
   const step = lineShare * small;
   const first = days.y + days.height + 1.9 * small;
   const room = Math.max(0, Math.floor((bottom - first) / step) + 1);
-  const texts = noteTexts(input);
-  // With little room the words matter more than the legend.
-  const showsLegend = room > texts.length;
-  const marks = showsLegend ? legendMarks(input, days, first, theme, sizes) : [];
-  for (const [line, { id, candidates }] of texts.slice(0, room).entries()) {
-    const base = first + (line + (showsLegend ? 1 : 0)) * step;
-    const style = { size: small, fill: theme.softInk };
-    marks.push(textMark(`note-${id}`, days.x, base, fittingText(candidates, days.width, small), style));
-  }
-  return marks;
+  const notes = noteTexts(input);
+  const showsLegend = room > notes.length;
+  const lines = noteLines(notes.slice(0, room), days.width, small, room - notes.length - 1);
+  return [
+    ...(showsLegend ? legendMarks(input, days, first, theme, sizes) : []),
+    ...lines.map(({ id, text }, line) => {
+      const base = first + (line + (showsLegend ? 1 : 0)) * step;
+      return textMark(`note-${id}`, days.x, base, text, { size: small, fill: theme.softInk });
+    }),
+  ];
 }
 
 interface Note {
   readonly id: string;
-  /** The longest first. */
-  readonly candidates: readonly string[];
+  /** What must be said. */
+  readonly main: string;
+  /** What follows it on the same line, or on the next one. */
+  readonly rest: string;
+  readonly between: string;
+}
+
+/** The notes as lines: whole where they fit, else their main part, with the rest below it for as many notes as have room. */
+function noteLines(notes: readonly Note[], width: number, size: number, spare: number): { id: string; text: string }[] {
+  let left = spare;
+  return notes.flatMap(({ id, main, rest, between }) => {
+    const whole = rest === "" ? main : main + between + rest;
+    if (textWidth(whole, size, 400) <= width) return [{ id, text: whole }];
+    const lines = [{ id, text: fittingText([main], width, size) }];
+    if (rest !== "" && left-- > 0) lines.push({ id: `${id}-rest`, text: fittingText([rest], width, size) });
+    return lines;
+  });
 }
 
 /** What the reader must know first comes first: a sign that is not explained is worse than a missing count. */
 function noteTexts(input: LatitudesInput): Note[] {
   return [
     ...remarks(input),
-    { id: "data", candidates: [dataText(input), dataCountText(input)] },
-    { id: "source", candidates: [`${input.grid} · ${input.region}`, input.region] },
+    { id: "data", main: dataCountText(input), between: ", ", rest: endsText(input) },
+    { id: "source", main: input.grid, between: " · ", rest: input.region },
   ];
 }
 
@@ -57,22 +72,18 @@ function noteTexts(input: LatitudesInput): Note[] {
 function remarks({ record, result, errorSource }: LatitudesInput): Note[] {
   const notes: Note[] = [];
   if (result.error) {
-    const under = `hatched: below ${errorsWithin95} standard errors`;
-    const source = errorSource ? [`${under} of ${errorSource}`] : [];
-    notes.push({ id: "doubt", candidates: [...source, under, "hatched: within its error"] });
+    const rest = errorSource ? `of ${errorSource}` : "";
+    notes.push({ id: "doubt", main: `hatched: below ${errorsWithin95} standard errors`, between: " ", rest });
   }
   if (hasBlend(record)) {
-    notes.push({
-      id: "blend",
-      candidates: ["rows with a bracket: blended across the equator", "bracket: blended rows", "bracket: blended"],
-    });
+    notes.push({ id: "blend", main: "rows with a bracket: blended", between: " ", rest: "across the equator" });
   }
   return notes;
 }
 
 /** The remarks in full, for those who cannot see the signs they explain. */
 export function remarkTexts(input: LatitudesInput): string[] {
-  return remarks(input).map(({ candidates }) => candidates[0]);
+  return remarks(input).map(({ main, between, rest }) => (rest === "" ? main : main + between + rest));
 }
 
 function dataCountText({ record }: LatitudesInput): string {
@@ -80,10 +91,11 @@ function dataCountText({ record }: LatitudesInput): string {
   return `${formatCount(held)} of ${formatCount(record.hasData.length)} dates have data`;
 }
 
-function dataText(input: LatitudesInput): string {
-  if (!isFiltered(input)) return dataCountText(input);
+/** What the filter loses; empty where there was none. */
+function endsText(input: LatitudesInput): string {
+  if (!isFiltered(input)) return "";
   const lost = formatNumber(input.result.response.daysLostEachEnd, 0);
-  return `${dataCountText(input)}, the ${filterName(input.band)} weakens ${lost} days at each end`;
+  return `the ${filterName(input.band)} weakens ${lost} days at each end`;
 }
 
 /** Swatches with their words, left to right; those that do not fit are left out. */

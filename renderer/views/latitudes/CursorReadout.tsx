@@ -3,9 +3,9 @@ import { useBenchState } from "../../app/bench-context";
 import { rowAt } from "../../figure/cell-values";
 import type { Picture } from "../../state/bench-state";
 import { Units } from "../../text/Units";
-import { intervalText, valueText } from "../../text/values";
+import { intervalText } from "../../text/values";
 import { quantityText } from "./quantities";
-import { dateText, meanStyle } from "./readout";
+import { dateText, meanStyle, onDateText } from "./readout";
 
 /** The numbers on the held latitude. */
 export function CursorReadout({ picture }: { readonly picture: Picture }) {
@@ -17,7 +17,7 @@ export function CursorReadout({ picture }: { readonly picture: Picture }) {
   // The unit stands once above, so that no row grows onto a second line while values change.
   const style = { ...numbers, units: "" };
   const entries = [
-    [dateText(picture, result.dateIndex), valueText(style, result.onDate[row])],
+    [`${dateText(picture, result.dateIndex)}${result.error ? " ± error" : ""}`, onDateText(picture, row, style)],
     ["Mean ± 95 %", intervalText(style, result.profile.mean[row], result.profile.half95[row])],
     ["Independent samples", formatNumber(result.profile.effectiveSize[row], 0)],
     ["Dates that entered", formatNumber(result.profile.dates[row], 0)],

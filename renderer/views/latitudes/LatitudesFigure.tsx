@@ -7,7 +7,7 @@ import { Overlay } from "../../figure/Overlay";
 import type { Pointed } from "../../figure/pointing";
 import { SceneView } from "../../figure/SceneView";
 import { useSize } from "../../figure/use-size";
-import { bandLimits, shownEdges } from "../../state/band-edges";
+import { recordLimits } from "../../state/band-edges";
 import type { Picture } from "../../state/bench-state";
 import { nearestIndex } from "../../state/cursor";
 import { heldMarks, pictureScene } from "./picture-scene";
@@ -27,11 +27,12 @@ export function LatitudesFigure({ picture, ground }: LatitudesFigureProps) {
   const spectrum = useBenchState((state) => state.spectrum);
   const band = useBenchState((state) => state.studies?.present.study.band ?? picture.open.study.band);
   const computing = useBenchState((state) => state.computing);
-  const scene = useMemo(
-    () =>
-      size && size.width > 0 && size.height > 0 ? pictureScene(picture, spectrum, band, size, themes[ground]) : null,
-    [picture, spectrum, band, size, ground],
-  );
+  const noSpectrum = useBenchState((state) => state.noSpectrum);
+  const blendedRows = useBenchState((state) => state.blendedRows);
+  const scene = useMemo(() => {
+    if (!size || size.width <= 0 || size.height <= 0) return null;
+    return pictureScene(picture, { band, spectrum, noSpectrum, blendedRows }, size, themes[ground]);
+  }, [picture, spectrum, noSpectrum, blendedRows, band, size, ground]);
 
   const timePanel = scene?.panels.find((panel) => panel.id === "latitude-time");
   const columns = timePanel ? columnsFor(timePanel.width * window.devicePixelRatio) : null;
@@ -47,8 +48,7 @@ export function LatitudesFigure({ picture, ground }: LatitudesFigureProps) {
     if (pointed.day !== null) bench.setDate(nearestIndex(record.time.values, pointed.day));
   };
   const spectrumPanel = scene?.panels.find((panel) => panel.id === "spectrum");
-  const step = Math.abs(record.time.step);
-  const limits = bandLimits(step, step * record.time.values.length);
+  const limits = recordLimits(record.time);
 
   return (
     <div
@@ -72,7 +72,7 @@ export function LatitudesFigure({ picture, ground }: LatitudesFigureProps) {
           {spectrumPanel && band.filter !== "none" ? (
             <BandHandles
               panel={spectrumPanel}
-              band={shownEdges(band, limits)}
+              band={band}
               limits={limits}
               onMove={(edge, days) => bench.setEdge(edge, days, `edge ${edge}`)}
               onEnd={() => bench.endGesture()}

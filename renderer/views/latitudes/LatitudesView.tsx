@@ -7,7 +7,7 @@ import { LatitudesFigure } from "./LatitudesFigure";
 import { ProfileTable } from "./ProfileTable";
 import { Spoken } from "./Spoken";
 import { StudyActions } from "./StudyActions";
-import { StudySettings } from "./StudySettings";
+import { StudySettings } from "./settings/StudySettings";
 import { Toolbar } from "./Toolbar";
 
 /** Map, zonal mean and latitude-time picture on one latitude axis; the band and the days with data below. */

@@ -4,8 +4,7 @@ import { useBenchState } from "../../app/bench-context";
 import { rowAt } from "../../figure/cell-values";
 import type { Picture } from "../../state/bench-state";
 import { spokenCursor } from "../../text/spoken";
-import { valueText } from "../../text/values";
-import { dateText, meanStyle } from "./readout";
+import { dateText, meanStyle, onDateText } from "./readout";
 
 const restMs = 300;
 
@@ -17,7 +16,7 @@ export function Spoken({ picture }: { readonly picture: Picture }) {
   useEffect(() => {
     if (!cursor || playing) return;
     const timer = setTimeout(() => {
-      const value = valueText(meanStyle(picture), picture.result.onDate[rowAt(picture, cursor.latitude)]);
+      const value = onDateText(picture, rowAt(picture, cursor.latitude), meanStyle(picture));
       setText(spokenCursor(formatLatitude(cursor.latitude, 2), dateText(picture, picture.result.dateIndex), value));
     }, restMs);
     return () => clearTimeout(timer);

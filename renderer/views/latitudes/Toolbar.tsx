@@ -5,7 +5,8 @@ import { Segments } from "../../controls/Segments";
 import { Select } from "../../controls/Select";
 import { progressText } from "../../text/progress";
 import { recordText } from "../../text/record";
-import { quantityChoices } from "./quantities";
+import { ComputingLine } from "./ComputingLine";
+import { quantityGroups } from "./quantity-groups";
 import { TransportIcon } from "./TransportIcon";
 
 const bandChoices = [
@@ -28,7 +29,7 @@ export function Toolbar() {
       <Select
         label="Quantity"
         value={choice.quantity}
-        choices={quantityChoices}
+        choices={quantityGroups}
         onChoose={(quantity) => bench.chooseField({ quantity })}
       />
       <Segments
@@ -56,7 +57,7 @@ export function Toolbar() {
           {record && cursor ? formatDate(record.time.calendar, record.time.values[cursor.dateIndex]) : ""}
         </span>
       </div>
-      {record && !loading ? <span className="period">{recordText(record)}</span> : null}
+      {record && !loading ? <ComputingLine otherwise={recordText(record)} /> : null}
       {loading ? (
         <span className="loading" role="status">
           {progressText(loading)}

@@ -1,7 +1,5 @@
 import { quantities } from "../../../core/ocean/quantities/index";
 
-export const quantityChoices = quantities.map(({ id, title }) => ({ value: id, title }));
-
 /** Title and SI units of a quantity; an id this version does not know shows as itself. */
 export function quantityText(id: string): { readonly title: string; readonly units: string; readonly signed: boolean } {
   return quantities.find((quantity) => quantity.id === id) ?? { title: id, units: "", signed: true };

@@ -4,7 +4,7 @@ import { mapValueAt, rowAt, timeValueAt } from "../../figure/cell-values";
 import type { Pointed } from "../../figure/pointing";
 import type { Picture } from "../../state/bench-state";
 import { nearestIndex } from "../../state/cursor";
-import { intervalText, type ValueStyle, valueStyle, valueText } from "../../text/values";
+import { doubtText, intervalText, type ValueStyle, valueStyle, valueText } from "../../text/values";
 import { quantityText } from "./quantities";
 
 export interface Readout {
@@ -26,6 +26,11 @@ function styleFor(quantity: string, [lower, upper]: readonly [number, number]): 
   return valueStyle(quantityText(quantity).units, Math.max(Math.abs(lower), Math.abs(upper)));
 }
 
+/** The zonal mean on the picture's date, with its error where that is known. */
+export function onDateText({ result }: Picture, row: number, style: ValueStyle): string {
+  return doubtText(style, result.onDate[row], result.error?.onDate[row]);
+}
+
 /** Date at an index of the picture's record. */
 export function dateText({ record }: Picture, index: number): string {
   return formatDate(record.time.calendar, record.time.values[index]);
@@ -38,7 +43,7 @@ export function pointerReadout(picture: Picture, pointed: Pointed): Readout | nu
     const cell = mapValueAt(picture, latitude, longitude);
     const place = `${formatLatitude(cell.latitude, 2)} ${formatLongitude(cell.longitude, 2)}`;
     return {
-      value: cell.isOcean ? valueText(mapStyle(picture), cell.value) : "never any data",
+      value: cell.isOcean ? doubtText(mapStyle(picture), cell.value, cell.standardError) : "never any data",
       place: `${place}, ${dateText(picture, picture.result.dateIndex)}`,
     };
   }

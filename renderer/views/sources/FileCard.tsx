@@ -1,10 +1,11 @@
 import type { RecognisedFile } from "../../../core/contract/engine";
 import { formatCount, formatLatitude, formatLongitude, formatNumber } from "../../../core/figure/format";
+import { boxText } from "../../../core/figure/record-text";
 import { formatDate } from "../../../core/figure/time-ticks";
 import type { FileReport, GridFileReport, TrackFileReport } from "../../../core/model/source";
 import { faultSentences } from "../../state/notices";
 import { fileName } from "../../state/paths";
-import { boxText, bytesText, periodText, samplingText } from "../../text/record";
+import { bytesText, periodText, samplingText } from "../../text/record";
 import { Facts, shortened } from "./Facts";
 
 /** One file: what it was recognised as, or why it was refused. */

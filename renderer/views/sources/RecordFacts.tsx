@@ -1,6 +1,7 @@
 import type { RecordOverview } from "../../../core/contract/engine";
 import { formatCount, formatNumber } from "../../../core/figure/format";
-import { boxText, bytesText, periodText, samplingText } from "../../text/record";
+import { boxText } from "../../../core/figure/record-text";
+import { bytesText, periodText, samplingText } from "../../text/record";
 import { Facts } from "./Facts";
 
 /** The loaded record in numbers. */

@@ -5,6 +5,7 @@ import { ExtentForm } from "./ExtentForm";
 import { FileList } from "./FileList";
 import { OpenPaths } from "./OpenPaths";
 import { RecordFacts } from "./RecordFacts";
+import { SuppliedVelocity } from "./SuppliedVelocity";
 
 /** What was opened, what was recognised and refused, and the part of it the study uses. */
 export function SourcesView() {
@@ -25,6 +26,7 @@ export function SourcesView() {
             <p className="quiet">Share of cells with data, by date; dates without any in red.</p>
           </section>
         ) : null}
+        {open && record ? <SuppliedVelocity open={open} /> : null}
         <section aria-label="Files">
           <h2>
             Files
