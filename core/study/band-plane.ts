@@ -12,7 +12,8 @@ export interface Background {
 /**
  * Height in the band on one date, in metres: one weighted sum of height planes less the background. Equals filtering every
  * cell's own series after its background is off, gaps included: cells that miss dates which others have are filtered by
- * themselves. NaN where a cell has too little data. `filter` null: only the background is taken off.
+ * themselves. NaN where a cell has no height on the date or too little data around it. `filter` null: only the background is
+ * taken off.
  */
 export function bandHeightPlane(
   record: HeightRecord,
@@ -22,8 +23,11 @@ export function bandHeightPlane(
 ): Float64Array {
   if (!filter) return anomalyPlane(record, date, background);
   const plane = weightedSum(record, filter.row(record.hasData, date), background);
+  const { values } = record.cube;
   record.irregular.forEach((cell) => {
-    plane[cell] = filter.apply(anomalySeries(record, cell, background), Int32Array.of(date))[0];
+    // A filter bridges a short gap; what it finds there is no measurement and is not shown as one.
+    const isKnown = !Number.isNaN(values[date * plane.length + cell]);
+    plane[cell] = isKnown ? filter.apply(anomalySeries(record, cell, background), Int32Array.of(date))[0] : Number.NaN;
   });
   return plane;
 }
