@@ -176,6 +176,8 @@ export interface ForcingResult {
   /** All latitudes and dates about one mean: steady jets count; and about each latitude's own mean. */
   readonly push: PushEstimate;
   readonly pushInTime: PushEstimate;
+  /** Mean convergence on mean flow over the latitudes: whether eddies hold up the standing jets. */
+  readonly pushOfMeans: PushEstimate;
   /** Energy from eddies to the zonal-mean flow, W kg-1 (m2 s-3). */
   readonly conversion: Estimate;
   /** beta - U_yy of the mean flow, m-1 s-1, and the latitudes where it changes sign. */

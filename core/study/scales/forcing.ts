@@ -39,16 +39,18 @@ export function forcingOf(
       (_, row) => meanAndDeviation(matrix.subarray(row * dates, (row + 1) * dates)).mean,
     );
   const meanFlow = mean(flow);
+  const meanConvergence = mean(convergence);
   const gradient = absoluteVorticityGradient(meanFlow, meridian);
   const blocks = blockMeans(convergence, rows, days, mostColumns);
   return {
     meanFlow,
     flux: mean(flux),
-    convergence: mean(convergence),
+    convergence: meanConvergence,
     latitudeTime: { rows, columns: blocks.days.length, values: Float32Array.from(blocks.values) },
     days: blocks.days,
     push: pushEstimate(eddyPush(flow, convergence, rows, "all")),
     pushInTime: pushEstimate(eddyPush(flow, convergence, rows, "each latitude")),
+    pushOfMeans: pushEstimate(eddyPush(meanFlow, meanConvergence, rows, "all")),
     conversion: meanOfSeries(energy),
     gradient,
     signChanges: signChanges(gradient, meridian.latitude),

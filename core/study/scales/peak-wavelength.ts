@@ -8,17 +8,17 @@ const seed = 1;
 
 /**
  * Wavelength (inverse of the wavenumber's unit) at which wavenumber times density peaks: what carries most variance on a
- * logarithmic axis. The top is the parabola's in the logarithm of wavenumber. NaN without a positive value; wavenumber 0
+ * logarithmic axis. The top is the parabola's through the highest bin and its
+ * neighbours. NaN without a positive value; wavenumber 0
  * is left out.
  */
 export function peakWavelength(wavenumber: Float64Array, density: Float64Array): number {
-  const logarithm = wavenumber.map(Math.log);
   const preserving = density.map((value, k) => value * wavenumber[k]);
   let best = 0;
   for (let k = 1; k < density.length; k++) if (preserving[k] > (best > 0 ? preserving[best] : 0)) best = k;
   if (best === 0) return Number.NaN;
   const inside = best > 1 && best < density.length - 1;
-  return Math.exp(-(inside ? parabolaVertex(logarithm, preserving, best).at : logarithm[best]));
+  return 1 / (inside ? parabolaVertex(wavenumber, preserving, best).at : wavenumber[best]);
 }
 
 /**

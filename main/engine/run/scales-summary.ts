@@ -1,4 +1,4 @@
-import type { Drift, Estimate, ScalesResult } from "../../../core/model/scales-result";
+import type { Drift, Estimate, PushEstimate, ScalesResult } from "../../../core/model/scales-result";
 
 /** Headline numbers of the scales for summary.json, each with its unit. */
 export function scalesSummary(scales: ScalesResult): object {
@@ -42,11 +42,9 @@ export function scalesSummary(scales: ScalesResult): object {
     },
     driftAlongLatitude: driftOf(drift.alongLatitude),
     driftAcrossLatitudes: driftOf(drift.acrossLatitudes),
-    eddyPush: {
-      ...estimate(forcing.push.perDay, "day-1"),
-      correlation: number(forcing.push.correlation, "1"),
-      effectivePairs: number(forcing.push.effectivePairs, "1"),
-    },
+    eddyPush: pushOf(forcing.push),
+    eddyPushInTime: pushOf(forcing.pushInTime),
+    eddyPushOfMeans: pushOf(forcing.pushOfMeans),
     energyToMeanFlow: estimate(forcing.conversion, "W kg-1"),
     signChangesOfGradient: { value: forcing.signChanges, unit: "degrees_north" },
     notes: scales.notes,
@@ -59,6 +57,14 @@ function number(value: number, unit: string) {
 
 function estimate({ value, low95, high95 }: Estimate, unit: string) {
   return { ...number(value, unit), low95: number(low95, unit).value, high95: number(high95, unit).value };
+}
+
+function pushOf({ perDay, correlation, effectivePairs }: PushEstimate) {
+  return {
+    ...estimate(perDay, "day-1"),
+    correlation: number(correlation, "1"),
+    effectivePairs: number(effectivePairs, "1"),
+  };
 }
 
 function driftOf(drift: Drift | null) {

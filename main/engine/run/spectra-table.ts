@@ -23,11 +23,11 @@ export function spectraTable({ period, zonal, meridional }: ScalesResult): strin
 }
 
 function rowsOf(direction: string, { eachMap, timeMean, inBand }: DirectionSpectra): (string | number)[][] {
-  const curves = { "each map": eachMap, "time mean": timeMean, "in the band": inBand };
+  const curves = { "of each map": eachMap, "of the time mean": timeMean, "in the band": inBand };
   return Object.entries(curves).flatMap(([name, curve]) =>
     curve
       ? Array.from(curve.wavenumber, (wavenumber, k) => [
-          `${direction}, ${name}`,
+          `${direction} ${name}`,
           "",
           wavenumber,
           "",

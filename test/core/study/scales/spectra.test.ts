@@ -30,7 +30,8 @@ describe("spectra of one map", () => {
   test("the plane of energy holds the mean of (u² + v²) / 2", () => {
     const { u, v } = waveFlow(800_000, 300_000);
     const { energy } = mapSpectra(u, v, spacing);
-    const integral = (energy ?? new Float64Array(0)).reduce((sum, value) => sum + value, 0) / (rows * columns * 20_000 * 20_000);
+    const integral =
+      (energy ?? new Float64Array(0)).reduce((sum, value) => sum + value, 0) / (rows * columns * 20_000 * 20_000);
     const mean = u.reduce((sum, value, i) => sum + (value ** 2 + v[i] ** 2) / 2, 0) / u.length;
     expectClose(integral, mean, {
       relative: 0.01,

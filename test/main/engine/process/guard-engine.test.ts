@@ -38,6 +38,7 @@ const calls: readonly (readonly [string, (open: OpenStudy) => Promise<unknown>])
   ["load", (open) => guarded.load({ open, grid: "A" })],
   ["latitudes", (open) => guarded.latitudes({ open, grid: "A", choice, dateIndex: 0, columns: 1 })],
   ["spectrum", (open) => guarded.spectrum({ open, grid: "A", quantity: "u" })],
+  ["scales", (open) => guarded.scales({ open, grid: "A" })],
   ["run", (open) => guarded.run({ open, folder: at("open", "r"), overwrite: false })],
 ];
 
@@ -60,10 +61,12 @@ describe.each(calls)("%s", (_method, call) => {
     expect(standIn.called).toEqual([]);
   });
 
-  test("is refused a study whose tracks, path or folder are elsewhere, or that is no study", async () => {
+  test("is refused a study whose tracks, table of radii, path or folder are elsewhere, or that is no study", async () => {
     const right = study(["grid/a.nc"]);
     const tracks = [{ id: "T", label: "", files: ["../secret/s.nc"], height: "auto" }];
     await expect(call({ ...right, study: { ...right.study, tracks } })).rejects.toMatchObject({ tag: "request" });
+    const scales = { ...right.study.scales, deformation: { file: "../secret/s.nc" } };
+    await expect(call({ ...right, study: { ...right.study, scales } })).rejects.toMatchObject({ tag: "request" });
     await expect(call({ ...right, path: at("secret", "s.nc") })).rejects.toMatchObject({ tag: "request" });
     await expect(call({ ...right, folder: at("secret") })).rejects.toMatchObject({ tag: "request" });
     await expect(call({ ...right, folder: "open" })).rejects.toMatchObject({ tag: "study" });
