@@ -1,17 +1,14 @@
 import fc from "fast-check";
-import { describe, expect, test } from "vitest";
+import { describe, test } from "vitest";
 import { bandResponse, filterSeries, lanczosFilter } from "../../../../core/numeric/band-filter";
 import { butterworthSections, zeroPhaseResponse } from "../../../../core/numeric/filters/butterworth";
-import { lanczosPieces, runningMeanPieces, zeroPhasePieces } from "../../../../core/numeric/filters/piece-filters";
 import { runningMean, runningMeanResponse } from "../../../../core/numeric/filters/running-mean";
-import { filterWithGaps, type PieceFilter } from "../../../../core/numeric/filters/split-gaps";
 import { zeroPhaseFilter } from "../../../../core/numeric/filters/zero-phase";
 import { expectAllClose, expectClose } from "../../../expect-close";
 
 interface Case {
   readonly name: string;
   readonly apply: (series: Float64Array) => Float64Array;
-  readonly pieces: PieceFilter;
   readonly response: (frequency: number) => number;
 }
 
@@ -27,7 +24,6 @@ const cases: Case[] = [
     return {
       name: `Lanczos ${each.shortestSamples} to ${each.longestSamples}`,
       apply: (series) => filterSeries(series, filter),
-      pieces: lanczosPieces(filter),
       response: (f) => bandResponse(filter, f),
     };
   }),
@@ -36,7 +32,6 @@ const cases: Case[] = [
     return {
       name: `Butterworth ${each.shortestSamples} to ${each.longestSamples}`,
       apply: (series) => zeroPhaseFilter(series, sections),
-      pieces: zeroPhasePieces(sections),
       response: (f) => zeroPhaseResponse(sections, f),
     };
   }),
@@ -44,7 +39,6 @@ const cases: Case[] = [
     (points): Case => ({
       name: `running mean over ${points}`,
       apply: (series) => runningMean(series, points).values,
-      pieces: runningMeanPieces(points),
       response: (f) => runningMeanResponse(points, f),
     }),
   ),
@@ -55,7 +49,7 @@ const value = fc.double({ min: -5, max: 5, noNaN: true });
 const pair = fc.array(fc.tuple(value, value), { minLength: 60, maxLength: 140 });
 const rounding = { absolute: 1e-10, because: "values up to 35, sums and recursions over 140 samples" };
 
-describe.each(named)("%s", (_, { apply, pieces, response }) => {
+describe.each(named)("%s", (_, { apply, response }) => {
   test("is linear", () => {
     fc.assert(
       fc.property(pair, value, value, (both, p, q) => {
@@ -100,25 +94,6 @@ describe.each(named)("%s", (_, { apply, pieces, response }) => {
         }
       }),
       { numRuns: 20 },
-    );
-  });
-
-  test("never gives a value in a gap too long to bridge, and flags every value that it bridged", () => {
-    fc.assert(
-      fc.property(
-        fc.array(fc.integer({ min: 0, max: 299 }), { maxLength: 12 }),
-        fc.integer({ min: 0, max: 6 }),
-        (holes, bridge) => {
-          const series = Float64Array.from({ length: 300 }, (_, t) => Math.sin(t / 7));
-          for (const hole of holes) series.fill(Number.NaN, hole, hole + 4);
-          const { values, bridged } = filterWithGaps(series, { bridge }, pieces);
-          series.forEach((each, t) => {
-            if (Number.isNaN(each) && bridged[t] === 0) expect(values[t]).toBeNaN();
-            if (!Number.isNaN(each)) expect(bridged[t]).toBe(0);
-          });
-        },
-      ),
-      { numRuns: 40 },
     );
   });
 });
