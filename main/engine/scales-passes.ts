@@ -3,7 +3,7 @@ import type { PersistenceResult } from "../../core/model/scales-result";
 import { thinnedDates } from "../../core/study/latitude-time";
 import type { Job } from "./job";
 import type { WorkerPool } from "./pool";
-import { sharedFloat64 } from "./shared-memory";
+import { sharedFloat32, sharedFloat64 } from "./shared-memory";
 import type { FieldArguments } from "./tasks/field";
 import { addMoments, type Moments } from "./tasks/moments";
 
@@ -15,19 +15,35 @@ const mostBandSignMaps = 400;
 /** In the band, maps this many to its shortest period: no reversal of sign falls between them. */
 const mapsAPeriod = 8;
 
-/** One pass over every date: moments of u and v, momentum flux by row and date, v along a row by column and date. */
+/** What a pass over every date leaves: see FlowTarget. */
+export interface FlowPass {
+  readonly moments: Moments;
+  readonly flux: Float64Array;
+  readonly alongRow: Float64Array;
+  readonly samples: Float32Array;
+}
+
+/** One pass over every date: moments of u and v, momentum flux by row and date, v along a row and in sampled cells. */
 export async function flowPass(
   pool: WorkerPool,
   field: FieldArguments,
   row: number,
+  sampleCells: Int32Array,
   job: Job,
-): Promise<{ readonly moments: Moments; readonly flux: Float64Array; readonly alongRow: Float64Array }> {
+): Promise<FlowPass> {
   const { dates, rows, columns } = field.record.cube;
-  const target = { row, flux: sharedFloat64(rows * dates), alongRow: sharedFloat64(columns * dates) };
+  const target = {
+    row,
+    flux: sharedFloat64(rows * dates),
+    alongRow: sharedFloat64(columns * dates),
+    sampleCells,
+    samples: sharedFloat32(sampleCells.length * dates),
+  };
   const blocks = await job.step("Adding up currents and momentum fluxes", dates, () =>
     pool.share("scaleFlow", dates, (range) => ({ ...field, dates: range, target }), job, flowPieces),
   );
-  return { moments: addMoments(blocks), ...target };
+  const { flux, alongRow, samples } = target;
+  return { moments: addMoments(blocks), flux, alongRow, samples };
 }
 
 /** How lastingly u keeps its sign: maps thinned in time, and the zonal means `zonal[row * dates + date]` on every date. */

@@ -46,15 +46,14 @@ export async function scalesResult(workspace: Workspace, request: ScalesRequest,
   const latitude = record.axes.latitude.values;
   const row = rowAt(latitude, request.latitude);
   const { basis } = await workspace.background(open, grid, job);
-  const ofV = await workspace.reduction(open, grid, "v", job);
 
   const plain = { ...fieldArguments(stages, study, false), background: noBackground };
-  const { moments, flux, alongRow } = await flowPass(pool, plain, row, job);
+  const flow = await flowPass(pool, plain, row, reduction.sampleCells, job);
   const spacing = gridSpacing(record.axes, geometry);
   const field = { ...fieldArguments(stages, study, inBand), quantity: "u" };
   const banded = inBand ? field : null;
   const ends = stages.filter?.ends(record.hasData) ?? new Uint8Array(dates);
-  const maps = spacing ? await mapSpectraOf(pool, plain, banded, ends, moments, spacing, job) : noMapSpectra;
+  const maps = spacing ? await mapSpectraOf(pool, plain, banded, ends, flow.moments, spacing, job) : noMapSpectra;
   const every = Int32Array.from({ length: dates }, (_, date) => date);
   const picture = await pictureSeries(pool, stages, field, every, job);
   const persistence = await persistencePass(pool, field, picture, job);
@@ -63,7 +62,7 @@ export async function scalesResult(workspace: Workspace, request: ScalesRequest,
   const longitudes = longitudePositions(record.axes.longitude.values, geometry.east[row]);
   const series = {
     u: reduction.samples,
-    v: ofV.samples,
+    v: flow.samples,
     cellWeights: Float64Array.from(reduction.sampleCells, (cell) => geometry.east[Math.floor(cell / geometry.columns)]),
     days,
     stepDays: record.time.step,
@@ -77,17 +76,17 @@ export async function scalesResult(workspace: Workspace, request: ScalesRequest,
   const [fromSeries, along, acrossLatitudes, forcing] = await job.step("Following waves, drift and forcing", 4, () =>
     Promise.all([
       pool.run("scaleSeries", series, job),
-      pool.run("scaleAlong", { quantity: "v", values: alongRow, ...longitudes, days, basis, even }, job),
+      pool.run("scaleAlong", { quantity: "v", values: flow.alongRow, ...longitudes, days, basis, even }, job),
       pool.run(
         "scaleDrift",
         { quantity: "u", values: picture, ...latitudePositions(latitude, geometry.north), days },
         job,
       ),
-      pool.run("scaleForcing", { flow: reduction.zonal, flux, days, latitude, geostrophy }, job),
+      pool.run("scaleForcing", { flow: reduction.zonal, flux: flow.flux, days, latitude, geostrophy }, job),
     ]),
   );
 
-  const speeds = flowSpeeds(moments, geometry.east);
+  const speeds = flowSpeeds(flow.moments, geometry.east);
   const radii = latitude.map((value) => deformationRadiusAt(deformation, value, geostrophy));
   const byLatitude = lengthsByLatitude(speeds, geometry.beta, radii);
   const middle = rows >> 1;

@@ -11,9 +11,12 @@ export interface FlowTarget {
   /** v along one row, `alongRow[column * dates + date]`, m s-1. */
   readonly row: number;
   readonly alongRow: Float64Array;
+  /** Cells whose v is kept whole, `samples[cell * dates + date]`, m s-1. */
+  readonly sampleCells: Int32Array;
+  readonly samples: Float32Array;
 }
 
-/** One pass over a range of dates: moments of u and v, the momentum flux, v along a row. Counts one a date. */
+/** One pass over a range of dates: moments of u and v, the momentum flux, v along a row and in sampled cells. Counts one a date. */
 export function scaleFlowTask(
   args: FieldArguments & { readonly dates: readonly [number, number]; readonly target: FlowTarget },
   job: JobFlags,
@@ -47,6 +50,9 @@ export function scaleFlowTask(
     for (let column = 0; column < columns; column++) {
       target.alongRow[column * dates + date] = v[target.row * columns + column];
     }
+    target.sampleCells.forEach((cell, i) => {
+      target.samples[i * dates + date] = v[cell];
+    });
   }
   return { sum, squares, count };
 }
