@@ -257,6 +257,32 @@ describe("little data", () => {
   });
 });
 
+test("across the blanked equator the belt is blank, the rest is not, and the middle row's absence is said", async () => {
+  const file = await writeMadeGrid(join(temporary, "equator.nc"), {
+    latitudes: line(-10, 0.5, 41),
+    longitudes: line(-150, 0.5, 40),
+    days: line(20_000, 5, 60),
+    height: (day, latitude, longitude) => 0.05 * Math.sin(latitude * 2 + day / 9) * Math.cos(longitude / 2 + day / 20),
+  });
+  const open = studyOf([file], { geostrophy: sphere });
+  const result = await engine.scales({ open, grid: "A" });
+  expect(result.middleLatitude).toBe(0);
+  expect(result.byLatitude.totalSpeed[20]).toBeNaN();
+  expect(result.byLatitude.totalSpeed[2]).toBeGreaterThan(0);
+  expect(result.drift.alongLatitude).toBeNull();
+  expect(result.notes.join(" ")).toMatch(/No drift along 0\.00°/);
+  expectPicturesToShow(result);
+  const { cautions } = await engine.load({ open, grid: "A" });
+  expect(cautions.find(({ id }) => id === "equator")?.text).toMatch(/19 rows within 5° of the equator are blank/);
+});
+
+test("the sample's maps are alike from end to end: no caution on their data, one on tides in the band", async () => {
+  const { cautions } = await engine.load({ open: sampleStudy(), grid: "A" });
+  const ids = cautions.map(({ id }) => id);
+  expect(ids).not.toContain("unlikeMaps");
+  expect(ids).toContain("tides");
+});
+
 describe("deformation radius", () => {
   const withRadius = (deformation: unknown) => sampleStudy({ ...smallCut, scales: { deformation } });
 
