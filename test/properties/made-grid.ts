@@ -77,7 +77,7 @@ export async function writeMadeGrid(path: string, made: MadeGrid): Promise<strin
   return path;
 }
 
-/** A study of such files, without background or band unless `changes` brings them. */
+/** A study of such files, without background, band or random oceans unless `changes` brings them. */
 export function studyOf(files: readonly string[], changes: object = {}): OpenStudy {
   const study = readStudy(
     {
@@ -85,6 +85,7 @@ export function studyOf(files: readonly string[], changes: object = {}): OpenStu
       grids: [{ id: "A", files }],
       background: { mean: false, trend: false, annual: false, semiannual: false },
       band: { filter: "none" },
+      eddyTest: { oceans: 0 },
       outputs: { fields: "all", figures: [] },
       ...changes,
     },

@@ -32,7 +32,7 @@ const height = (day: number, y: number, longitude: number) => {
   return 0.4 + 0.1 * Math.sin(3 * x * degree + day / 7) + 0.05 * Math.cos(17 * x * degree - y / 2 + day / 11);
 };
 const days = line(20000, 3, 40);
-const globe: MadeGrid = { latitudes: line(28, 1, 8), longitudes: line(0, 1, 360), days, height };
+const globe: MadeGrid = { latitudes: line(28, 1, 8), longitudes: line(0, 2, 180), days, height };
 const box: MadeGrid = { latitudes: line(28, 0.5, 12), longitudes: line(-6, 0.5, 24), days, height };
 
 describe("longitudes told from 0 or from -180", () => {
@@ -58,28 +58,27 @@ describe("longitudes told from 0 or from -180", () => {
             const read = longitude.flatMap(([from, to]) => longitudes.slice(from, to));
             const around = (value: number) => ((value % 360) + 360) % 360;
             expect(read.map(around)).toEqual(Array.from(axes.longitude.values, around));
-            for (let i = 1; i < axes.longitude.values.length; i++) {
-              expect(axes.longitude.values[i] - axes.longitude.values[i - 1]).toBe(0.5);
-            }
+            const { values } = axes.longitude;
+            expect(values.every((value, i) => i === 0 || value - values[i - 1] === 0.5)).toBe(true);
             return read.map(around);
           }),
         );
         for (const cells of chosen) expect(cells).toEqual(chosen[0]);
         expect(chosen[0].length).toBe(Math.min(720, 2 * width + 1));
       }),
-      { numRuns: 200 },
+      { numRuns: 100 },
     );
   });
 
   test("350 to 10 of a global file is one box, with the same values whichever way the file counts", async () => {
     const east = await writeMadeGrid(join(temporary, "east.nc"), globe);
-    const west = await writeMadeGrid(join(temporary, "west.nc"), { ...globe, longitudes: line(-180, 1, 360) });
+    const west = await writeMadeGrid(join(temporary, "west.nc"), { ...globe, longitudes: line(-180, 2, 180) });
     const region = { west: 350, east: 10, south: 28, north: 35 };
     const [one, other] = [await run(east, { region }), await run(west, { region })];
-    expect(Array.from(one.fields.longitude)).toEqual(line(350, 1, 21));
+    expect(Array.from(one.fields.longitude)).toEqual(line(350, 2, 11));
     expect(other.fields).toEqual(one.fields);
     const wanted = days.flatMap((day) =>
-      globe.latitudes.flatMap((y) => line(350, 1, 21).map((x) => height(day, y, x))),
+      globe.latitudes.flatMap((y) => line(350, 2, 11).map((x) => height(day, y, x))),
     );
     expectAllClose(one.fields.height, wanted, { relative: 1e-7, because: "float32" });
   });
@@ -87,10 +86,10 @@ describe("longitudes told from 0 or from -180", () => {
   test("on a whole turn derivatives cross the seam: what the file calls first changes nothing", async () => {
     const region = { west: 0, east: 360, south: 28, north: 35 };
     const results: Record<string, Float64Array>[] = [];
-    for (const start of [0, -180, 77]) {
+    for (const start of [0, -180, 76]) {
       const path = await writeMadeGrid(join(temporary, `turn-${start}.nc`), {
         ...globe,
-        longitudes: line(start, 1, 360),
+        longitudes: line(start, 2, 180),
       });
       results.push((await run(path, { region })).fields);
     }

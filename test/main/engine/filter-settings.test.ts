@@ -71,6 +71,12 @@ describe("filters along time, against numpy and scipy on the same file", () => {
       expect(report.largest).toBeLessThan(1e-6);
       expect(summary.study.band).toEqual({ ...open.study.band });
       expect(summary.filter.bridgedDates).toBe(2);
+      const told = readBack(join(folder, "latitude-time.nc"), ["coverage", "filter_end", "bridged"]);
+      expect(Array.from(told.bridged.keys()).filter((t) => told.bridged[t] === 1)).toEqual([60, 61]);
+      expect(told.coverage[59] + told.coverage[60]).toBe(1);
+      expect([told.filter_end[0], told.filter_end[110], told.filter_end[169]]).toEqual([1, 0, 1]);
+      expect(told.filter_end.reduce((sum, mark) => sum + mark, 0)).toBe(summary.filter.markedDates);
+      expect(methods.includes("odd extension at the ends")).toBe(filter === "butterworth");
       expect(history).toContain(JSON.stringify(open.study.band));
       for (const part of [...words, "up to 15 days"]) expect(methods).toContain(part);
     },
@@ -110,6 +116,33 @@ describe("bridgeDays 0", () => {
     expect(Math.abs(other[near] - all.height_band[near])).toBeGreaterThan(1e-4);
     for (let t = 100; t < 105; t++) expect(other[t * cells]).toBeNaN();
   });
+});
+
+describe("spectra", () => {
+  test.each([
+    ["hann", 0.5, "Hann"],
+    ["hamming", 0.25, "Hamming"],
+    ["boxcar", 0, ""],
+    ["cosine", 0.5, "cosine"],
+    ["multitaper", 0, "sine"],
+  ] as const)(
+    "with %s tapers hold the variance of a 5 cm wave, and tell taper, overlap and units",
+    async (taper, overlap, name) => {
+      const days = line(20000, 3, 200);
+      const height = (day: number) => 0.05 * Math.cos((2 * Math.PI * (day - 20000)) / 60);
+      const path = await writeMadeGrid(join(temporary, `${taper}.nc`), { ...patch, days, height });
+      const open = studyOf([path], { spectrum: { taper, overlap } });
+      const { density, frequency, window, units } = await engine.spectrum({ open, grid: "A", quantity: "height" });
+      const variance = density.reduce((sum, value) => sum + value, 0) * (frequency[1] - frequency[0]);
+      expectClose(variance, 0.05 ** 2 / 2, { relative: 0.01, because: "ten whole waves under a taper of unit power" });
+      expectClose(1 / frequency[density.indexOf(Math.max(...density))], 60, {
+        relative: 0.11,
+        because: "one frequency step",
+      });
+      expect(window).toMatch(new RegExp(`${name}.*overlap ${100 * overlap} %`, "i"));
+      expect(units).toBe("(m)2 day");
+    },
+  );
 });
 
 describe("filters in space", () => {

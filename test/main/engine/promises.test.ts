@@ -10,6 +10,8 @@ import { pythonJson } from "../../setup/python";
 import { temporaryFolder } from "../../temporary-folder";
 
 const temporary = temporaryFolder();
+/** Each of these starts engines of its own and makes several whole runs. */
+const slow = 240_000;
 
 /** SHA-256 of every file of a result, by its name. */
 function hashesOf(folder: string): Record<string, string> {
@@ -22,12 +24,13 @@ function hashesOf(folder: string): Record<string, string> {
   );
 }
 
-/** Everything that acts on numbers at once: band, filter in space, errors, every field. */
+/** Everything that acts on numbers at once: band, filter in space, errors, random oceans, every field. */
 const everything = {
   ...smallCut,
   band: { filter: "butterworth", shortestDays: 30, longestDays: 120, order: 3 },
   space: { zonal: { shortestKm: null, longestKm: 400 }, removeZonalMean: true },
   errors: { heightMetres: 0.03, correlationKm: 80 },
+  eddyTest: { oceans: 30 },
   outputs: { fields: "all" },
 };
 
@@ -43,19 +46,23 @@ describe("the same bits", () => {
       },
     ],
     ["means instead of every date", { ...everything, outputs: { fields: "mean" } }],
-  ])("come from one, two and four workers: %s", async (name, changes) => {
-    const hashes = [];
-    for (const workers of [1, 2, 4]) {
-      const engine = createEngine({ workers });
-      const folder = join(temporary, `${name.slice(0, 4)}-${workers}`);
-      await engine.run({ open: sampleStudy(changes), folder, overwrite: false });
-      await engine.close();
-      hashes.push(hashesOf(folder));
-    }
-    expect(Object.keys(hashes[0])).toContain("fields.nc");
-    expect(hashes[1]).toEqual(hashes[0]);
-    expect(hashes[2]).toEqual(hashes[0]);
-  });
+  ])(
+    "come from one, two and four workers: %s",
+    async (name, changes) => {
+      const hashes = [];
+      for (const workers of [1, 2, 4]) {
+        const engine = createEngine({ workers });
+        const folder = join(temporary, `${name.slice(0, 4)}-${workers}`);
+        await engine.run({ open: sampleStudy(changes), folder, overwrite: false });
+        await engine.close();
+        hashes.push(hashesOf(folder));
+      }
+      expect(Object.keys(hashes[0])).toContain("fields.nc");
+      expect(hashes[1]).toEqual(hashes[0]);
+      expect(hashes[2]).toEqual(hashes[0]);
+    },
+    slow,
+  );
 
   test("come from a second run of the same engine, after another study took its memory", async () => {
     const engine = createEngine({ workers: 2 });
