@@ -19,20 +19,21 @@ export function quantityById(id: string): Quantity {
 
 /**
  * Lazy lookup of every quantity on one height plane (metres, row-major rows × columns): each is computed once, when first
- * asked for. `anomaly` is the base plane "height-anomaly": height minus each cell's mean over the period; leave it out
- * where the height has no mean in it, as a band has not, and the height itself is taken. Its constant parts do not matter.
+ * asked for. `anomaly` makes the base plane "height-anomaly": height minus each cell's mean over the period; leave it out
+ * where the height has no mean in it, and the height itself is taken. Its constant parts do not matter.
  * Error: Fault "request" for an id that is none of them.
  */
-export function planesFrom(height: Float64Array, geometry: GridGeometry, anomaly: Float64Array = height): PlaneLookup {
-  const known = new Map<string, Float64Array>([
-    ["height", height],
-    ["height-anomaly", anomaly],
-  ]);
+export function planesFrom(
+  height: Float64Array,
+  geometry: GridGeometry,
+  anomaly: () => Float64Array = () => height,
+): PlaneLookup {
+  const known = new Map<string, Float64Array>([["height", height]]);
   const lookup: PlaneLookup = (id) => {
     const ready = known.get(id);
     if (ready) return ready;
-    const compute = intermediates[id] ?? quantityById(id).compute;
-    const plane = compute(lookup, geometry);
+    const made = () => (intermediates[id] ?? quantityById(id).compute)(lookup, geometry);
+    const plane = id === "height-anomaly" ? anomaly() : made();
     known.set(id, plane);
     return plane;
   };

@@ -38,12 +38,16 @@ export function fieldSource({ record, geostrophy, space, background, band, inBan
   return {
     geometry,
     on: (date) => {
-      if (inBand && record.hasData[date]) {
-        return planesFrom(inSpace(bandHeightPlane(record, date, filter, background)), geometry);
-      }
-      const heights = planeOf(record.cube, date);
-      const anomaly = heights.map((value, cell) => value - record.mean[cell]);
-      return planesFrom(inSpace(heights), geometry, inSpace(anomaly));
+      const isFiltered = inBand && record.hasData[date] === 1;
+      const heights = isFiltered ? bandHeightPlane(record, date, filter, background) : planeOf(record.cube, date);
+      const hasMean = !isFiltered || !takesMean(background);
+      const anomaly = () => inSpace(hasMean ? heights.map((value, cell) => value - record.mean[cell]) : heights);
+      return planesFrom(inSpace(heights), geometry, anomaly);
     },
   };
+}
+
+/** Whether the mean is among what the background takes off. */
+function takesMean({ basis }: Background): boolean {
+  return basis.names.some((name, term) => name === "mean" && basis.removed[term] === 1);
 }
