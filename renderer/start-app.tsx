@@ -12,7 +12,9 @@ import "./styles/base.css";
 import "./styles/controls.css";
 import "./styles/app.css";
 import "./styles/latitudes.css";
+import "./styles/jets.css";
 import "./styles/settings.css";
+import "./styles/scales.css";
 import "./styles/sources.css";
 
 /** Puts the app into `root`, its engine behind `door`. */

@@ -12,6 +12,7 @@ import {
   rowHeadingMarks,
 } from "./latitudes/headings";
 import { type FigureSize, isFiltered, type LatitudesInput } from "./latitudes/input";
+import { jetLabelMarks, jetLabelTexts, jetLineMarks, jetsSentence, litJetMarks } from "./latitudes/jet-marks";
 import { latitudeTimeMarks, latitudeTimePanel } from "./latitudes/latitude-time-panel";
 import { type LatitudesLayout, latitudesLayout } from "./latitudes/layout";
 import { latitudeScale, mapMarks, mapPanel } from "./latitudes/map-panel";
@@ -36,6 +37,7 @@ export function latitudesScene(input: LatitudesInput, size: FigureSize, theme: T
   const unplaced = spectrumPanel(input, { x: 0, y: 0, width: 1, height: 1 });
   const layout = latitudesLayout(size, {
     leftLabels: [...ticks, ...varianceTicks(unplaced, input)].map((tick) => tick.label),
+    rightLabels: jetLabelTexts(input),
     mapHeading: mapHeading(input),
     mapSubheading: mapSubheading(input),
     pictureHeading,
@@ -56,8 +58,12 @@ export function latitudesScene(input: LatitudesInput, size: FigureSize, theme: T
       ...colourKeyMarks("map-key", input, input.result.limits, layout.mapKey, layout.sizes, theme),
       ...colourKeyMarks("picture-key", input, input.result.pictureLimits, layout.pictureKey, layout.sizes, theme),
       ...mapMarks(input, layout, map, ticks, theme),
+      ...litJetMarks(input, map, theme),
       ...zonalMeanMarks(input, layout, zonalMean, theme),
+      ...litJetMarks(input, zonalMean, theme),
       ...latitudeTimeMarks(input, layout, latitudeTime, theme),
+      ...jetLineMarks(input, latitudeTime, theme),
+      ...jetLabelMarks(input, layout, latitudeTime, theme),
       ...lower.marks,
     ],
     panels: [map, zonalMean, latitudeTime, ...lower.panels],
@@ -133,6 +139,7 @@ function description(input: LatitudesInput): string {
     `${mapHeading(input)}, ${input.region}: a map, the zonal mean over ${first} to ${last} with its 95 % band, ` +
     `and the zonal mean through time on one latitude axis; ${periodsText(input)}. ` +
     `Colours run from ${lower} to ${upper}${unitText} on the map, from ${pictureLower} to ${pictureUpper}${unitText} through time. ` +
+    jetsSentence(input) +
     [...remarkTexts(input), input.grid].map((remark) => `${capital(remark)}.`).join(" ")
   );
 }

@@ -54,6 +54,8 @@ function dress(ground: Ground): void {
     "amber-ink": theme.amberInk,
     "amber-ground": theme.amberTint,
     danger: theme.gap,
+    rust: theme.rust,
+    teal: theme.teal,
   };
   for (const [name, value] of Object.entries(colours)) root.style.setProperty(`--${name}`, value);
 }

@@ -12,6 +12,7 @@ import type { DoorKind } from "../../core/contract/wire";
 import type { LinkState } from "../bridge/engine-link";
 import type { Cursor } from "./cursor";
 import type { History } from "./history";
+import { type JetsState, noJets } from "./jets-state";
 import type { Notice } from "./notices";
 import type { Comparison } from "./velocities";
 
@@ -51,6 +52,9 @@ export interface BenchState {
   readonly comparison: Comparison | null;
   /** A comparison under way. */
   readonly comparing: Progress | null;
+  readonly jets: JetsState;
+  /** Id of the jet lit in every panel, among those found. */
+  readonly selectedJet: number | null;
   /** The picture is behind what was asked for. */
   readonly computing: boolean;
   /** Where that computing stands, once it tells. */
@@ -90,6 +94,8 @@ export const firstState: BenchState = {
   blendedRows: null,
   comparison: null,
   comparing: null,
+  jets: noJets,
+  selectedJet: null,
   computing: false,
   computingStep: null,
   loading: null,

@@ -8,10 +8,12 @@ import { type Drafts, throttled } from "./draft";
 import { recordKey, withBand } from "./edit-study";
 import { fields } from "./fields";
 import { commit, endGesture, type History, redo, undo } from "./history";
+import { type Jets, jets } from "./jets";
 import { type Loader, loader } from "./loader";
 import { addNotice, engineStopped, noticeFromError } from "./notices";
 import { player } from "./player";
 import { type Results, results } from "./results";
+import { type Scales, scales } from "./scales";
 import { type Velocities, velocities } from "./velocities";
 
 /** The store and everything a person can do with it. */
@@ -20,6 +22,8 @@ export interface Bench {
   readonly loader: Loader;
   readonly results: Results;
   readonly velocities: Velocities;
+  readonly jets: Jets;
+  readonly scales: Scales;
   readonly link: EngineLink;
   set(change: Partial<BenchState>): void;
   /** Makes `next` the present study; changes of one gesture are one step of undo. */
@@ -61,6 +65,9 @@ export function createBench(link: EngineLink, drafts: Drafts): Bench {
   const reading = loader({ store, engine: link.engine, drafts, fail, tell, loaded: () => drawn.refresh() });
   const writing = results(store, link.engine, drafts, tell);
   const comparing = velocities(store, link.engine, fail);
+  const measuring = scales(store, link.engine);
+  const following = jets(store, link.engine);
+  zustand.subscribe(() => following.refresh());
 
   const setDate = (index: number): void => {
     const { cursor, record } = store.get();
@@ -102,6 +109,7 @@ export function createBench(link: EngineLink, drafts: Drafts): Bench {
       if (state !== "lost" || before !== "ready") return;
       playing.stop();
       drawn.stop();
+      measuring.stop();
       tell(engineStopped, "It is being started again. Nothing you set is lost.");
     },
     onEngine(welcome, again) {
@@ -133,6 +141,8 @@ export function createBench(link: EngineLink, drafts: Drafts): Bench {
     loader: reading,
     results: writing,
     velocities: comparing,
+    scales: measuring,
+    jets: following,
     link,
     set: store.set,
     edit: (next, gesture) => change((studies) => commit(studies, next, gesture ?? null)),

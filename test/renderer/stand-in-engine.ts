@@ -2,6 +2,7 @@ import type { Engine, OpenStudy, RecordOverview } from "../../core/contract/engi
 import type { Axis, TimeAxis } from "../../core/model/axis";
 import { Fault } from "../../core/model/errors";
 import { type Study, studySchema } from "../../core/study/schema";
+import { madeJet, madeJets, madeTest, madeVerdict } from "./made-jets";
 
 /** Size of the made-up ocean: half a degree, three-day maps. */
 export const standInSize = { rows: 43, columns: 51, dates: 300 };
@@ -143,9 +144,22 @@ export function standInEngine(calls: string[] = []): Engine {
       };
     },
     velocities: async () => null,
-    jets: async () => ({}) as never,
+    async jets({ open: { study } }) {
+      calls.push("jets");
+      await pause(20);
+      return madeJets(JSON.stringify(study.band), [
+        madeJet({ id: 1, sign: 1, meanLatitude: 26 }),
+        madeJet({ id: 2, sign: -1, meanLatitude: 31 }),
+      ]);
+    },
     scales: async () => ({}) as never,
-    eddyTest: async () => ({}) as never,
+    async eddyTest({ open: { study } }, options) {
+      for (let done = 0; done < 3; done++) {
+        options?.onProgress?.({ step: "Drawing oceans of eddies", done, total: 3 });
+        await pause(30);
+      }
+      return madeTest(JSON.stringify(study.band), [madeVerdict(1, 0.004), madeVerdict(2, 0.3)]);
+    },
     async spectrum({ quantity }) {
       await pause(20);
       const frequency = Float64Array.from({ length: 150 }, (_, i) => (i + 1) / (dates * stepDays));

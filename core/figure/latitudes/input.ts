@@ -1,5 +1,6 @@
 import type { Axis, TimeAxis } from "../../model/axis";
 import type { BandResponse, FieldError, Plane, Profile, SpectrumResult } from "../../model/results";
+import type { JetLine } from "./jet-line";
 
 /** What the figure of the latitude row is drawn from. SI units throughout. */
 export interface LatitudesInput {
@@ -26,6 +27,10 @@ export interface LatitudesInput {
     /** Gaps up to this long are bridged, and drawn as such. Left out: none is. */
     readonly bridgeDays?: number;
   };
+  /** Jets drawn over the latitude-time picture. Empty: none, but their labels' room is kept; left out: no room either. */
+  readonly jets?: readonly JetLine[];
+  /** Id of the jet that is lit in every panel. */
+  readonly selectedJet?: number | null;
   /** What the standard errors come from, "a 2 cm height error"; wanted where the result has errors. */
   readonly errorSource?: string;
   /** "20–41° N, 150–125° W". */

@@ -1,6 +1,7 @@
 import { ascentShare, descentShare } from "../marks";
 import { textWidth } from "../text-width";
 import type { FigureSize } from "./input";
+import { jetLabelRoom } from "./jet-label-room";
 
 export interface Box {
   readonly x: number;
@@ -41,6 +42,8 @@ export interface LatitudesLayout {
 export interface LayoutNeeds {
   /** Widest label left of the frames. */
   readonly leftLabels: readonly string[];
+  /** Labels of jets right of the picture; none where no jets are drawn. */
+  readonly rightLabels?: readonly string[];
   readonly mapHeading: string;
   readonly mapSubheading: string;
   readonly pictureHeading: string;
@@ -73,7 +76,10 @@ export function latitudesLayout(size: FigureSize, needs: LayoutNeeds): Latitudes
   const panelGap = Math.round(1.7 * heading);
   const labelWidth = Math.max(...needs.leftLabels.map((label) => textWidth(label, small, 400)));
   const left = Math.ceil(margin + labelWidth + tickLength + 4);
-  const columns = size.width - left - 2 * panelGap - Math.round(2 * heading);
+  const jetWidths = (needs.rightLabels ?? []).map((label) => jetLabelRoom(small).text + textWidth(label, small, 700));
+  // At least what half of a date's label takes that stands under the picture's right end.
+  const right = Math.ceil(Math.max(2 * heading, ...jetWidths.map((width) => width + 0.8 * heading)));
+  const columns = size.width - left - 2 * panelGap - right;
   const zonalWidth = Math.round(clamp(0.125 * columns, 6 * heading, 13 * heading));
 
   const headingBase = margin + ascentShare * heading;

@@ -68,9 +68,12 @@ function noteTexts(input: LatitudesInput): Note[] {
   ];
 }
 
-/** What the hatch and the bracket on the map mean, each where it is drawn. */
-function remarks({ record, result, errorSource }: LatitudesInput): Note[] {
+/** What the jets' lines, the hatch and the bracket mean, each where it is drawn. */
+function remarks({ record, result, errorSource, jets = [] }: LatitudesInput): Note[] {
   const notes: Note[] = [];
+  if (jets.length > 0) {
+    notes.push({ id: "jets", main: "jets: solid eastward, dashed westward", between: "", rest: "" });
+  }
   if (result.error) {
     const rest = errorSource ? `of ${errorSource}` : "";
     notes.push({ id: "doubt", main: `hatched: below ${errorsWithin95} standard errors`, between: " ", rest });

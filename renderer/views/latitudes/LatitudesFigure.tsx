@@ -10,6 +10,7 @@ import { useSize } from "../../figure/use-size";
 import { recordLimits } from "../../state/band-edges";
 import type { Picture } from "../../state/bench-state";
 import { nearestIndex } from "../../state/cursor";
+import { JetLabels } from "./jets/JetLabels";
 import { heldMarks, pictureScene } from "./picture-scene";
 import { pointerReadout } from "./readout";
 
@@ -29,10 +30,13 @@ export function LatitudesFigure({ picture, ground }: LatitudesFigureProps) {
   const computing = useBenchState((state) => state.computing);
   const noSpectrum = useBenchState((state) => state.noSpectrum);
   const blendedRows = useBenchState((state) => state.blendedRows);
+  const found = useBenchState((state) => state.jets.found);
+  const selectedJet = useBenchState((state) => state.selectedJet);
   const scene = useMemo(() => {
     if (!size || size.width <= 0 || size.height <= 0) return null;
-    return pictureScene(picture, { band, spectrum, noSpectrum, blendedRows }, size, themes[ground]);
-  }, [picture, spectrum, noSpectrum, blendedRows, band, size, ground]);
+    const around = { band, spectrum, noSpectrum, blendedRows, found, selectedJet };
+    return pictureScene(picture, around, size, themes[ground]);
+  }, [picture, spectrum, noSpectrum, blendedRows, found, selectedJet, band, size, ground]);
 
   const timePanel = scene?.panels.find((panel) => panel.id === "latitude-time");
   const columns = timePanel ? columnsFor(timePanel.width * window.devicePixelRatio) : null;
@@ -69,6 +73,7 @@ export function LatitudesFigure({ picture, ground }: LatitudesFigureProps) {
           readout={readout}
           onPoint={onPoint}
         >
+          <JetLabels scene={scene} selected={selectedJet} />
           {spectrumPanel && band.filter !== "none" ? (
             <BandHandles
               panel={spectrumPanel}

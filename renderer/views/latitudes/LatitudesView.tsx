@@ -3,6 +3,7 @@ import type { Ground } from "../../app/theme";
 import { NothingYet } from "../NothingYet";
 import { Cautions } from "./Cautions";
 import { CursorReadout } from "./CursorReadout";
+import { JetsPanel } from "./jets/JetsPanel";
 import { LatitudesFigure } from "./LatitudesFigure";
 import { ProfileTable } from "./ProfileTable";
 import { Spoken } from "./Spoken";
@@ -26,6 +27,7 @@ export function LatitudesView({ ground }: { readonly ground: Ground }) {
       </div>
       <aside className="side" aria-label="Readout and settings">
         {picture ? <CursorReadout picture={picture} /> : null}
+        <JetsPanel open={open} record={record} />
         <StudySettings open={open} />
         <Cautions cautions={cautions} />
         {picture ? <ProfileTable picture={picture} /> : null}

@@ -6,7 +6,9 @@ import type { Scene } from "../../../core/figure/scene";
 import type { BandSettings } from "../../../core/study/schema";
 import type { Size } from "../../figure/use-size";
 import type { Picture } from "../../state/bench-state";
+import type { FoundJets } from "../../state/jets-state";
 import { gridTitle } from "../../text/record";
+import { drawnJets } from "./jets/drawn-jets";
 import { quantityText } from "./quantities";
 import { dateText } from "./readout";
 
@@ -22,12 +24,15 @@ export interface Surroundings {
   /** Why there is no spectrum; empty where there is one, or it is still being computed. */
   readonly noSpectrum: string;
   readonly blendedRows: Uint8Array | null;
+  readonly found: FoundJets | null;
+  readonly selectedJet: number | null;
 }
 
 /** The scene of a picture. */
 export function pictureScene(picture: Picture, around: Surroundings, size: Size, theme: Theme): Scene {
   const { result, open, grid } = picture;
-  const { band, spectrum, noSpectrum, blendedRows } = around;
+  const { band, spectrum, noSpectrum, blendedRows, selectedJet } = around;
+  const jets = drawnJets(picture, around.found);
   const record = blendedRows ? { ...picture.record, blendedRows } : picture.record;
   return latitudesScene(
     {
@@ -36,6 +41,7 @@ export function pictureScene(picture: Picture, around: Surroundings, size: Size,
       spectrum: spectrum?.quantity === result.choice.quantity ? spectrum : undefined,
       ...(noSpectrum === "" ? {} : { spectrumNote: noSpectrum }),
       ...(result.error ? { errorSource: errorSourceText(open.study.errors) } : {}),
+      ...(jets ? { jets, selectedJet } : {}),
       quantity: quantityText(result.choice.quantity),
       band,
       region: boxText(record),
