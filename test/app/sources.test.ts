@@ -7,6 +7,9 @@ import { launchBrowser } from "./browser";
 import { type Door, sampleStudy, startDoor } from "./door";
 import { drawn, openWindow, startAfresh, steady, type TestWindow } from "./window";
 
+/** A run draws oceans of eddies, 40 s of work on one machine; the limit leaves room for a busy one. */
+const writingMs = 180_000;
+
 let browser: Browser;
 let door: Door;
 let shown: TestWindow;
@@ -53,7 +56,9 @@ describe("the Sources view", () => {
     await page.getByLabel("North, °N").fill("35");
     await page.getByRole("button", { name: "Apply" }).click();
     await tab("Latitudes");
-    await page.waitForFunction(() => document.querySelector(".toolbar .period")?.textContent?.startsWith("25–35° N"));
+    await page.waitForFunction(() =>
+      document.querySelector(".toolbar .period")?.textContent?.startsWith("25.13–34.88° N"),
+    );
     await drawn(page);
     await page.getByRole("button", { name: "Undo" }).click();
     await page.waitForFunction((old) => document.querySelector(".toolbar .period")?.textContent === old, before);
@@ -74,7 +79,9 @@ describe("the Sources view", () => {
     const tag = await page.locator(".cursor-tag text").textContent();
     const year = (await page.locator(".toolbar .date").textContent())?.slice(-4);
     await page.locator("header .segments label").nth(1).click();
-    await page.waitForFunction(() => document.querySelector('[data-mark="note-1"]')?.textContent?.includes("maps B"));
+    await page.waitForFunction(() =>
+      document.querySelector('[data-mark="note-source"]')?.textContent?.includes("maps B"),
+    );
     await drawn(page);
     expect(await page.locator(".cursor-tag text").textContent()).toBe(tag);
     expect((await page.locator(".toolbar .date").textContent())?.slice(-4)).toBe(year);
@@ -82,16 +89,20 @@ describe("the Sources view", () => {
 });
 
 describe("what is kept", () => {
-  test("results are written into the folder named, with progress and a notice", async () => {
-    const { page } = shown;
-    const place = path.join(folder, "results");
-    await page.getByRole("button", { name: "Write results…" }).click();
-    await page.getByLabel("Folder").fill(place);
-    await page.getByRole("button", { name: "Write", exact: true }).click();
-    await page.getByText("Results written").waitFor({ timeout: 60_000 });
-    expect(existsSync(path.join(place, "summary.json"))).toBe(true);
-    expect(shown.complaints).toEqual([]);
-  });
+  test(
+    "results are written into the folder named, with progress and a notice",
+    async () => {
+      const { page } = shown;
+      const place = path.join(folder, "results");
+      await page.getByRole("button", { name: "Write results…" }).click();
+      await page.getByLabel("Folder").fill(place);
+      await page.getByRole("button", { name: "Write", exact: true }).click();
+      await page.getByText("Results written").waitFor({ timeout: writingMs });
+      expect(existsSync(path.join(place, "summary.json"))).toBe(true);
+      expect(shown.complaints).toEqual([]);
+    },
+    2 * writingMs,
+  );
 
   test("a place that may not be written is told in the sheet, which stays open", async () => {
     const { page } = shown;

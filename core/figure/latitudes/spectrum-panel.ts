@@ -82,7 +82,7 @@ export function spectrumMarks(
     groundMark(panel, theme),
     ...(hasBand ? bandMarks(input, panel, theme) : []),
     pathMark("spectrum-line", curve, { stroke: theme.ink, strokeWidth: dataWidth, clip: panel.id }),
-    ...(note === "" ? [] : [noteMark(note, panel, theme, layout.sizes)]),
+    ...(note === "" ? [] : [noteMark(note, input, panel, theme, layout.sizes)]),
     frameMark(panel, theme),
     ...(hasBand ? edgeMarks(input, panel, bandLabelBase, theme, layout.sizes) : []),
     ...leftTickMarks(panel, varianceTicks(panel, input), theme, layout.sizes),
@@ -90,10 +90,14 @@ export function spectrumMarks(
   ];
 }
 
-/** Why the curve is missing, in the middle of where it would be. */
-function noteMark(note: string, panel: PanelFrame, theme: Theme, { small }: TypeSizes): Mark {
-  const text = fittingText([note, "No spectrum"], panel.width - 2 * small, small);
-  const [x, y] = [panel.x + panel.width / 2, panel.y + panel.height / 2 + 0.34 * small];
+/** Why the curve is missing, where it would be: in the widest stretch that the band's edges leave free. */
+function noteMark(note: string, input: LatitudesInput, panel: PanelFrame, theme: Theme, { small }: TypeSizes): Mark {
+  const edges = input.band.filter === "none" ? [] : edgePlaces(input, panel);
+  const places = [panel.x, ...edges, panel.x + panel.width];
+  const stretches = places.slice(1).map((right, index) => ({ left: places[index], width: right - places[index] }));
+  const { left, width } = stretches.reduce((widest, each) => (each.width > widest.width ? each : widest));
+  const text = fittingText([note, "No spectrum"], width - 2 * small, small);
+  const [x, y] = [left + width / 2, panel.y + panel.height / 2 + 0.34 * small];
   return textMark("spectrum-note", x, y, text, { size: small, fill: theme.softInk, anchor: "middle" });
 }
 
