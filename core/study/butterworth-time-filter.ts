@@ -1,6 +1,6 @@
 import { type Sections, zeroPhaseResponse } from "../numeric/filters/butterworth";
 import { type BridgedPiece, bridgedPieces, knownSamples, unbridgeRow } from "../numeric/filters/pieces";
-import { fewestSamples, paddingReach, zeroPhaseFilter } from "../numeric/filters/zero-phase";
+import { fewestSamples, paddingReach, zeroPhaseFilter, zeroPhaseWeights } from "../numeric/filters/zero-phase";
 import { zeroPhaseRow } from "../numeric/filters/zero-phase-row";
 import { bridgeGaps } from "../numeric/gaps";
 import type { TimeFilter } from "./time-filter";
@@ -12,6 +12,7 @@ import type { TimeFilter } from "./time-filter";
 export function butterworthTimeFilter(sections: Sections, bridge: number): TimeFilter {
   const fewest = fewestSamples(sections);
   const reach = paddingReach(sections);
+  const weights = zeroPhaseWeights(sections).map(Math.abs);
   const isLong = ({ from, to }: BridgedPiece) => to - from >= fewest;
   return {
     reach,
@@ -33,6 +34,14 @@ export function butterworthTimeFilter(sections: Sections, bridge: number): TimeF
       row.set(own, piece.from);
       return row;
     },
+    padding: sections.padSamples,
+    share: (known) => {
+      const out = new Float64Array(known.length);
+      for (const piece of bridgedPieces(known, bridge).filter(isLong)) {
+        for (let t = piece.from; t < piece.to; t++) out[t] = weightOnData(weights, known, piece, t);
+      }
+      return out;
+    },
     ends: (known) => {
       const flags = new Uint8Array(known.length).fill(1);
       for (const { from, to } of bridgedPieces(known, bridge).filter(isLong)) {
@@ -41,4 +50,16 @@ export function butterworthTimeFilter(sections: Sections, bridge: number): TimeF
       return flags;
     },
   };
+}
+
+/** Share of the filter's absolute weight (by lag) at t that lies on a piece's known samples. */
+function weightOnData(weights: Float64Array, known: Uint8Array, { from, to }: BridgedPiece, t: number): number {
+  let on = known[t] ? weights[0] : 0;
+  let total = weights[0];
+  for (let lag = 1; lag < weights.length; lag++) {
+    total += 2 * weights[lag];
+    if (t - lag >= from && known[t - lag]) on += weights[lag];
+    if (t + lag < to && known[t + lag]) on += weights[lag];
+  }
+  return on / total;
 }

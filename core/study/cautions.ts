@@ -4,6 +4,7 @@ import type { HeightRecord } from "./record";
 import { shortScaleChange } from "./scales/short-scale-change";
 import { aliasesInBand } from "./scales/tidal-aliases";
 import type { Study } from "./schema";
+import { filtersInSpace } from "./space-filter";
 
 export interface Caution {
   readonly id: string;
@@ -78,8 +79,12 @@ const rules: Readonly<Record<string, Rule>> = {
     return `${missing} of ${hasData.length} dates have no data (the first is ${first}); they stay blank and the filter leans on their neighbours.`;
   },
   space: ({ space }) =>
-    space.meridional || space.zonal || space.removeSurface || space.removeZonalMean
+    filtersInSpace(space)
       ? "Heights are filtered in space before currents are taken: speeds, energies and zonal means are of what is left."
+      : null,
+  errors: ({ errors, space }) =>
+    errors.heightMetres !== null && filtersInSpace(space)
+      ? "No standard errors are given: what filters in space do to the height's error is not worked out."
       : null,
   coast: (_, record) => {
     const share = nearLandShare(record);

@@ -15,6 +15,13 @@ import type { TimeFilter } from "./time-filter";
  */
 export function lanczosTimeFilter(filter: BandFilter, bridge: number): TimeFilter {
   const isLong = ({ from, to }: { from: number; to: number }) => to - from >= filter.halfWidth;
+  const share = (known: Uint8Array) => {
+    const out = new Float64Array(known.length);
+    for (const piece of bridgedPieces(known, bridge).filter(isLong)) {
+      out.set(weightShare(filter, known.subarray(piece.from, piece.to)), piece.from);
+    }
+    return out;
+  };
   return {
     reach: filter.halfWidth,
     response: (frequency) => bandResponse(filter, frequency),
@@ -45,15 +52,9 @@ export function lanczosTimeFilter(filter: BandFilter, bridge: number): TimeFilte
       if (filter.slow && !addLowPass(row, -1, filter.slow, filter.halfWidth, known, piece, date)) return null;
       return row;
     },
-    ends: (known) => {
-      const flags = new Uint8Array(known.length).fill(1);
-      for (const piece of bridgedPieces(known, bridge).filter(isLong)) {
-        weightShare(filter, known.subarray(piece.from, piece.to)).forEach((share, i) => {
-          if (share >= trustedWeightShare) flags[piece.from + i] = 0;
-        });
-      }
-      return flags;
-    },
+    padding: 0,
+    share,
+    ends: (known) => Uint8Array.from(share(known), (own) => (own >= trustedWeightShare ? 0 : 1)),
   };
 }
 

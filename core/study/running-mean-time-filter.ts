@@ -14,6 +14,15 @@ export function runningMeanTimeFilter(shortest: number | null, longest: number |
   const isLong = ({ from, to }: BridgedPiece) => to - from >= needed;
   const smoothed = (series: Float64Array, points: number | null) =>
     points === null ? null : runningMean(series, points);
+  const share = (known: Uint8Array) => {
+    const out = new Float64Array(known.length);
+    for (const piece of bridgedPieces(known, bridge).filter(isLong)) {
+      const own = Float64Array.from(known.subarray(piece.from, piece.to), (flag) => (flag ? 0 : Number.NaN));
+      const shares = windows.map((points) => runningMean(own, points).share);
+      for (let i = 0; i < own.length; i++) out[piece.from + i] = Math.min(...shares.map((each) => each[i]));
+    }
+    return out;
+  };
   return {
     reach,
     response: (frequency) =>
@@ -40,17 +49,9 @@ export function runningMeanTimeFilter(shortest: number | null, longest: number |
       if (longest !== null && !addMean(row, -1, longest, known, piece, date)) return null;
       return row;
     },
-    ends: (known) => {
-      const flags = new Uint8Array(known.length).fill(1);
-      for (const piece of bridgedPieces(known, bridge).filter(isLong)) {
-        const own = Float64Array.from(known.subarray(piece.from, piece.to), (flag) => (flag ? 0 : Number.NaN));
-        const shares = windows.map((points) => runningMean(own, points).share);
-        for (let i = 0; i < own.length; i++) {
-          if (shares.every((share) => share[i] >= trustedWeightShare)) flags[piece.from + i] = 0;
-        }
-      }
-      return flags;
-    },
+    padding: 0,
+    share,
+    ends: (known) => Uint8Array.from(share(known), (own) => (own >= trustedWeightShare ? 0 : 1)),
   };
 }
 

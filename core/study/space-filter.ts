@@ -43,6 +43,16 @@ export function spaceFilter(
   };
 }
 
+/** Whether a study filters heights in space at all. */
+export function filtersInSpace({
+  meridional,
+  zonal,
+  removeSurface,
+  removeZonalMean: lessMean,
+}: SpaceSettings): boolean {
+  return meridional !== null || zonal !== null || removeSurface !== null || lessMean;
+}
+
 function bandOf(band: { readonly shortestKm: number | null; readonly longestKm: number | null }): WavelengthBand {
   return { shortestKilometres: band.shortestKm, longestKilometres: band.longestKm };
 }

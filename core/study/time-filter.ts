@@ -15,6 +15,10 @@ export interface TimeFilter {
    * product with such a series equals `apply` there.
    */
   readonly row: (known: Uint8Array, date: number) => Float64Array | null;
+  /** Samples of padding at each end of a piece; 0 for filters that use none. */
+  readonly padding: number;
+  /** Share of the filter's weight that lies on dates with data; 0 where there is no value. About 1 inside, a half at an end. */
+  readonly share: (known: Uint8Array) => Float64Array;
   /** 1 on dates whose value rests on too little of the filter's weight, on padding, or is not there. */
   readonly ends: (known: Uint8Array) => Uint8Array;
 }

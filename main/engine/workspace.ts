@@ -2,6 +2,7 @@ import type { OpenStudy } from "../../core/contract/engine";
 import { Fault } from "../../core/model/errors";
 import type { Background } from "../../core/study/band-plane";
 import type { ReductionTarget } from "../../core/study/reduction";
+import { filtersInSpace } from "../../core/study/space-filter";
 import { type GridIndex, indexGrid } from "../readers/joined-grid";
 import { heightError } from "./height-error";
 import type { Job } from "./job";
@@ -80,10 +81,13 @@ export class Workspace {
     );
   }
 
-  /** Standard errors from the study's height error; null where it names none. */
+  /**
+   * Standard errors from the study's height error; null where it names none, and where heights are filtered in space, whose
+   * part in the error is not worked out.
+   */
   async errors(open: OpenStudy, gridId: string, job: Job): Promise<TaskResult<"errorPlanes"> | null> {
-    const { geostrophy, errors } = open.study;
-    if (errors.heightMetres === null) return null;
+    const { geostrophy, errors, space } = open.study;
+    if (errors.heightMetres === null || filtersInSpace(space)) return null;
     const loaded = await this.record(open, gridId, job);
     return this.#errors.get(
       JSON.stringify([recordKey(loaded.index, open), geostrophy, errors]),

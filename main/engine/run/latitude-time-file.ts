@@ -64,6 +64,11 @@ export async function writeLatitudeTime(path: string, analysis: Analysis): Promi
       ...(filter
         ? [
             along(
+              "filter_weight",
+              filter.share(record.hasData),
+              "share of the filter's weight that lies on dates with data",
+            ),
+            along(
               "filter_end",
               Float64Array.from(filter.ends(record.hasData)),
               "1 where the value in the band rests on too little of the filter's weight, or on padding",

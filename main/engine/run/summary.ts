@@ -104,6 +104,7 @@ function filterOf({ stages, open }: Analysis): object | null {
   const days = (level: number) => crossingDays(filter, level, time).map((period) => number(period, "days"));
   return {
     reachEachSide: number(filter.reach * time.step, "days"),
+    padding: number(filter.padding, "dates at each end"),
     halfAmplitudePeriods: days(0.5),
     halfPowerPeriods: days(Math.SQRT1_2),
     lostAtEachEnd: number(daysLost(filter, cube.dates, time.step), "days"),

@@ -88,6 +88,13 @@ describe.each(kinds)("%s", (_, settings) => {
     const ends = filter.ends(new Uint8Array(dates).fill(1));
     expect(ends[0]).toBe(1);
     expect(ends[200]).toBe(0);
+    const share = filter.share(known);
+    expectClose(filter.share(new Uint8Array(dates).fill(1))[200], 1, {
+      absolute: 1e-4,
+      because: "weights beyond the memory are left out",
+    });
+    expect(share[0]).toBeLessThan(0.9);
+    expect(share[160]).toBe(0);
     fc.assert(
       fc.property(fc.double({ min: -4, max: 4, noNaN: true }), (factor) => {
         const scaled = filter.apply(gappy.map((value) => factor * value));
