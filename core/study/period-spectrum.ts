@@ -22,7 +22,8 @@ const usual: SpectrumSettings = { taper: "hann", overlap: 0.5, detrend: "constan
 
 /**
  * Spectrum by period of a region: Welch spectra (Hann and half overlap unless told otherwise) of the sampled cells' anomalies, averaged with the cells' weights. Cells with
- * a gap longer than five samples leave out the segments it falls in. NaN density where no segment of any cell is whole.
+ * a gap longer than five samples leave out the segments it falls in; no segment is longer than the longest stretch without
+ * such a gap. NaN density where no cell has any.
  */
 export function regionSpectrum(
   quantity: Described,
@@ -34,12 +35,15 @@ export function regionSpectrum(
 ): SpectrumResult {
   const dates = basis.samples;
   const taper = taperOf(settings.taper);
-  const segment = Math.min(dates, Math.max(8, Math.floor(settings.longestSegmentDays / stepDays)));
+  const anomalies = Array.from(cellWeights, (_, cell) => {
+    const series = Float64Array.from(samples.subarray(cell * dates, (cell + 1) * dates));
+    return bridgeGaps(removeBackground(series, basis), bridgedSamples).values;
+  });
+  const whole = anomalies.reduce((most, values) => Math.max(most, longestStretch(values)), 0);
+  const segment = Math.min(whole, Math.max(8, Math.floor(settings.longestSegmentDays / stepDays)));
   const mean = new WeightedMean();
   let segments = 0;
-  for (let cell = 0; cell < cellWeights.length; cell++) {
-    const series = Float64Array.from(samples.subarray(cell * dates, (cell + 1) * dates));
-    const { values } = bridgeGaps(removeBackground(series, basis), bridgedSamples);
+  for (const [cell, values] of anomalies.entries()) {
     const { overlap, detrend } = settings;
     const spectrum = welchSpectrum(trimmed(values), stepDays, { segment, overlap, detrend, taper });
     if (spectrum.segments === 0) continue;
@@ -128,6 +132,17 @@ function taperOf(kind: SpectrumSettings["taper"]): Taper {
 
 function unitsOf({ units }: Described): string {
   return units === "1" ? "day" : `(${units})2 day`;
+}
+
+/** Most samples in a row that are there. */
+function longestStretch(series: Float64Array): number {
+  let longest = 0;
+  let run = 0;
+  for (const value of series) {
+    run = Number.isNaN(value) ? 0 : run + 1;
+    longest = Math.max(longest, run);
+  }
+  return longest;
 }
 
 /** Without the missing samples at both ends. */

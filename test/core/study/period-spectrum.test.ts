@@ -46,3 +46,12 @@ describe("the region's spectrum by period", () => {
     expect(result.window).toContain("Lomb-Scargle");
   });
 });
+
+test("a gap too long to bridge shortens the segments instead of taking the spectrum away", () => {
+  const days = Float64Array.from({ length: 360 }, (_, t) => 3 * t);
+  const gappy = waves(days).map((value, i) => (i % 360 >= 200 && i % 360 < 220 ? Number.NaN : value));
+  const result = regionSpectrum(u, gappy, weights, 3, backgroundBasis(days, none, 365.2425));
+  expect(result.segmentDays).toBe(600);
+  const peak = result.density.indexOf(Math.max(...result.density));
+  expectClose(1 / result.frequency[peak], 60, { relative: 0.08, because: "the spacing of frequencies" });
+});
