@@ -9,6 +9,8 @@ import type { SpectrumSettings } from "./schema";
 
 /** Gaps up to this many samples are bridged by straight lines before the transform. */
 export const bridgedSamples = 5;
+/** No segment is shorter. */
+const fewestSamples = 8;
 
 interface Described {
   readonly id: string;
@@ -23,7 +25,7 @@ const usual: SpectrumSettings = { taper: "hann", overlap: 0.5, detrend: "constan
 /**
  * Spectrum by period of a region: Welch spectra (Hann and half overlap unless told otherwise) of the sampled cells' anomalies, averaged with the cells' weights. Cells with
  * a gap longer than five samples leave out the segments it falls in; no segment is longer than the longest stretch without
- * such a gap. NaN density where no cell has any.
+ * such a gap. No frequencies at all where every stretch is shorter than eight samples.
  */
 export function regionSpectrum(
   quantity: Described,
@@ -40,10 +42,10 @@ export function regionSpectrum(
     return bridgeGaps(removeBackground(series, basis), bridgedSamples).values;
   });
   const whole = anomalies.reduce((most, values) => Math.max(most, longestStretch(values)), 0);
-  const segment = Math.min(whole, Math.max(8, Math.floor(settings.longestSegmentDays / stepDays)));
+  const segment = Math.min(whole, Math.max(fewestSamples, Math.floor(settings.longestSegmentDays / stepDays)));
   const mean = new WeightedMean();
   let segments = 0;
-  for (const [cell, values] of anomalies.entries()) {
+  for (const [cell, values] of (segment < fewestSamples ? [] : anomalies).entries()) {
     const { overlap, detrend } = settings;
     const spectrum = welchSpectrum(trimmed(values), stepDays, { segment, overlap, detrend, taper });
     if (spectrum.segments === 0) continue;

@@ -55,3 +55,11 @@ test("a gap too long to bridge shortens the segments instead of taking the spect
   const peak = result.density.indexOf(Math.max(...result.density));
   expectClose(1 / result.frequency[peak], 60, { relative: 0.08, because: "the spacing of frequencies" });
 });
+
+test("cells without a stretch of eight samples give no spectrum rather than an invented one", () => {
+  const days = Float64Array.from({ length: 120 }, (_, t) => 3 * t);
+  const holes = waves(days).map((value, i) => (i % 120 < 4 ? value : Number.NaN));
+  const result = regionSpectrum(u, holes, weights, 3, backgroundBasis(days, none, 365.2425));
+  expect(result.frequency.length).toBe(0);
+  expect(result.segments).toBe(0);
+});
