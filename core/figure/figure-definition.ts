@@ -7,6 +7,8 @@ export interface FigureDefinition<Id extends string, Input, Size> {
   readonly title: string;
   /** What it shows, in one line for menus and help. */
   readonly summary: string;
+  /** Height over width on paper; left out: that of a row of panels. */
+  readonly heightShare?: number;
   /** Pure function of results, size and theme. */
   readonly scene: (input: Input, size: Size, theme?: Theme) => Scene;
 }

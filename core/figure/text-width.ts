@@ -29,6 +29,13 @@ const others: Readonly<Record<string, number>> = {
   "“": 479,
   "”": 479,
   "’": 269,
+  "√": 685,
+  π: 625,
+  "∞": 774,
+  "∂": 596,
+  // Greek letters that the font lacks come from the system's: as wide as its widest usual face has them.
+  β: 700,
+  θ: 700,
 };
 /** Letters outside the table are counted as wide as a wide capital, so that a foreign title is never cut off. */
 const unknownWidth = 900;

@@ -2,6 +2,7 @@ import type { ReactNode } from "react";
 import { createElement } from "react";
 import type { Ground } from "../app/theme";
 import { LatitudesView } from "./latitudes/LatitudesView";
+import { ScalesView } from "./scales/ScalesView";
 import { SourcesView } from "./sources/SourcesView";
 
 export interface View {
@@ -14,4 +15,5 @@ export interface View {
 export const views: readonly View[] = [
   { id: "sources", title: "Sources", show: () => createElement(SourcesView) },
   { id: "latitudes", title: "Latitudes", show: (ground) => createElement(LatitudesView, { ground }) },
+  { id: "scales", title: "Scales", show: (ground) => createElement(ScalesView, { ground }) },
 ];
