@@ -132,7 +132,7 @@ describe("jets in words", () => {
   test("too few oceans are told of: n of them show no chance below 1 in n + 1, times the number of jets", () => {
     const verdicts = [1, 2, 3].map((jet) => madeVerdict(jet, 0.01));
     // Three jets at 5 %: 1 / 60 is the largest chance with which a lone jet is held.
-    expect(tooFewOceansText({ ...madeTest("one", verdicts), oceans: 58 })).toMatch(/takes 59 or more/);
+    expect(tooFewOceansText({ ...madeTest("one", verdicts), oceans: 58 })).toMatch(/with 59 or more/);
     expect(tooFewOceansText({ ...madeTest("one", verdicts), oceans: 59 })).toBe("");
   });
 });

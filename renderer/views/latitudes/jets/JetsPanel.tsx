@@ -83,7 +83,7 @@ function Jets({ open, record, result }: JetsPanelProps & { readonly result: Jets
 function notLookedFor(inBand: boolean): string {
   return inBand
     ? "Jets are looked for in the band: choose a filter to keep one."
-    : "Jets are looked for in the band; the field is shown as it stands.";
+    : "Jets are looked for in the band; here the field has all its periods.";
 }
 
 function noneFound({ shorterLines }: JetsResult, leastLifetimeDays: number): string {

@@ -105,10 +105,10 @@ export function verdictLegend({ oceans, halfSpacingDegrees, level }: EddyTestRes
   );
 }
 
-/** Says that a lone strong jet could not have been held, and how many oceans it takes; empty where there are enough. */
+/** Says that a lone strong jet may not have been held, and how many oceans are enough for it; empty where there are enough. */
 export function tooFewOceansText({ oceans, level, verdicts }: EddyTestResult): string {
   // The least chance that n oceans can show is 1 in n + 1; correction multiplies it by the number of jets.
   const wanted = Math.ceil(verdicts.length / level - 1e-9) - 1;
   if (oceans >= wanted) return "";
-  return `${formatCount(oceans)} oceans are few: to hold one jet among ${verdicts.length} takes ${formatCount(wanted)} or more.`;
+  return `${formatCount(oceans)} oceans are few: with ${formatCount(wanted)} or more even a lone jet among ${verdicts.length} can be held.`;
 }

@@ -47,7 +47,7 @@ export const populationNumbers: readonly PopulationNumber[] = [
   { key: "lifetimeDays", title: "Lifetime, days", scale: 1, least: 1, most: 10_000, unit: "days", note: "lifetime" },
   {
     key: "speedMetresPerSecond",
-    title: "Drift, cm s⁻¹ east",
+    title: "Drift, cm/s eastward",
     scale: 100,
     least: -200,
     most: 200,
