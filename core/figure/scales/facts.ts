@@ -66,7 +66,7 @@ function pushFact({ push, pushOfMeans }: ScalesResult["forcing"]): Fact {
     label,
     shortLabel: label.replace(" on the jets", ""),
     values: pushTexts(push),
-    notes: pushTexts(pushOfMeans).map((text) => `of the means ${text}`),
+    notes: pushTexts(pushOfMeans).map((text) => `of the means ${text}`.replace(" per day", "")),
   };
 }
 

@@ -42,12 +42,10 @@ export function periodPanel(cell: Cell, drawing: Drawing): PanelMarks {
   return {
     panels: [panel],
     marks: [
-      headingMark(cell, [heading], drawing),
+      headingMark(cell, [`${heading}, cm² s⁻²`, heading], drawing),
       subheadingMark(
         cell,
-        hasLimits
-          ? [`variance preserving, cm² s⁻²; grey: ${factors}`, `cm² s⁻²; grey: ${factors}`, `grey: ${factors}`, factors]
-          : ["variance preserving, cm² s⁻²", "cm² s⁻²"],
+        hasLimits ? [`variance preserving; grey: ${factors}`, `grey: ${factors}`, factors] : ["variance preserving"],
         drawing,
       ),
       groundMark(panel, theme),

@@ -54,7 +54,7 @@ export function wavelengthPanel(cell: Cell, drawing: Drawing): PanelMarks {
   return {
     panels: [panel],
     marks: [
-      headingMark(cell, [`${heading}, ${units}`, heading, "Wavelengths of u"], drawing),
+      headingMark(cell, [`${heading}, ${units}`, `Wavelengths of u, ${units}`, "Wavelengths of u"], drawing),
       ...legendMarks(cell, curves, drawing),
       groundMark(panel, theme),
       ...spreadMark(panel, drawing),

@@ -30,7 +30,7 @@ export function ScalesToolbar({ part, isEarlier }: ScalesToolbarProps) {
       {latitude !== null && values.length > 1 ? (
         <div className="scales-latitude">
           <NumberSetting
-            title="Along, °N"
+            title="Waves along, °N"
             label="Latitude of waves and drift, degrees north"
             value={Math.round(1000 * latitude) / 1000}
             rule={{ unit: "degrees", least: south, most: north }}
