@@ -65,6 +65,8 @@ export interface JetVerdictRow {
   readonly oceans: number;
   readonly p: number;
   readonly adjustedP: number;
+  /** No stronger jet of its direction stands in its neighbourhood: only such jets count as tests. */
+  readonly leads: boolean;
   readonly verdict: "held" | "not told apart from eddies";
 }
 

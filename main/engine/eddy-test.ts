@@ -78,7 +78,7 @@ export async function eddyTestResult(
     oceans,
     level,
     halfSpacingDegrees,
-    verdicts: verdicts.map(({ leads: _, ...verdict }, i) => ({ jet: found.jets[i].id, ...verdict })),
+    verdicts: verdicts.map((verdict, i) => ({ jet: found.jets[i].id, ...verdict })),
     population: {
       medianAmplitudeMetres: quantileAt(population.amplitudeMetres, 0.5),
       medianRadiusMetres: quantileAt(population.radiusMetres, 0.5),

@@ -47,7 +47,16 @@ export function madeJets(key: string, jets: readonly JetRow[], rows = 43): JetsR
 }
 
 export function madeVerdict(jet: number, p: number, verdict: JetVerdictRow["verdict"] = "held"): JetVerdictRow {
-  return { jet, score: 1, oceansAsStrong: Math.round(500 * p), oceans: 500, p, adjustedP: 1.5 * p, verdict };
+  return {
+    jet,
+    score: 1,
+    oceansAsStrong: Math.round(500 * p),
+    oceans: 500,
+    p,
+    adjustedP: 1.5 * p,
+    leads: true,
+    verdict,
+  };
 }
 
 export function madeTest(key: string, verdicts: readonly JetVerdictRow[]): EddyTestResult {

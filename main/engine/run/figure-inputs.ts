@@ -1,9 +1,11 @@
 import type { LatitudesInput } from "../../../core/figure/latitudes-figure";
-import { boxText, gridText } from "../../../core/figure/record-text";
+import { boxText, errorSourceText, gridText } from "../../../core/figure/record-text";
 import { bandText } from "../../../core/figure/scales/band-text";
 import type { ScalesInput } from "../../../core/figure/scales-figure";
 import { formatDate } from "../../../core/figure/time-ticks";
+import { blendedRows } from "../../../core/ocean/equator";
 import { quantityById } from "../../../core/ocean/quantities/evaluate";
+import { geometryOf } from "../../../core/study/geometry";
 import type { Job } from "../job";
 import { latitudesResult } from "../latitudes";
 import type { Workspace } from "../workspace";
@@ -31,6 +33,7 @@ export async function latitudesInput(analysis: Analysis, workspace: Workspace, j
     hasData: record.hasData,
     ocean: record.ocean,
     coverage: analysis.loaded.coverage,
+    blendedRows: blendedRows(geometryOf(record.axes, study.geostrophy)),
   };
   return {
     record: axes,
@@ -38,6 +41,8 @@ export async function latitudesInput(analysis: Analysis, workspace: Workspace, j
     ...(analysis.spectrum ? { spectrum: analysis.spectrum } : {}),
     quantity: { title: u.title, units: u.units, signed: u.signed },
     band: study.band,
+    ...(analysis.band && analysis.jets.jets ? { jets: analysis.jets.jets.jets } : {}),
+    errorSource: errorSourceText(study.errors),
     region: boxText(axes),
     grid: gridText(gridLabel(analysis), axes),
     date: formatDate(record.time.calendar, record.time.values[result.dateIndex]),

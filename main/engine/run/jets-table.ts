@@ -4,6 +4,11 @@ import type { EddyTestResult, JetRow, JetsResult } from "../../../core/model/jet
 
 type Column = readonly [header: string, value: (jet: JetRow) => string | number | undefined];
 
+function leadsText(leads: boolean | undefined): string | undefined {
+  if (leads === undefined) return undefined;
+  return leads ? "yes" : "no";
+}
+
 /** jets.csv: one row a jet, south to north, with what the eddy test made of it; empty where a number could not be had. */
 export function jetsTable({ jets }: JetsResult, eddyTest: EddyTestResult | null, time: TimeAxis): string {
   const verdicts = new Map(eddyTest?.verdicts.map((verdict) => [verdict.jet, verdict]));
@@ -34,6 +39,7 @@ export function jetsTable({ jets }: JetsResult, eddyTest: EddyTestResult | null,
     ["oceans as strong [1]", ({ id }) => verdicts.get(id)?.oceansAsStrong],
     ["p against eddies [1]", ({ id }) => verdicts.get(id)?.p],
     ["p corrected over jets [1]", ({ id }) => verdicts.get(id)?.adjustedP],
+    ["leads its neighbourhood", ({ id }) => leadsText(verdicts.get(id)?.leads)],
     ["verdict", ({ id }) => verdicts.get(id)?.verdict],
   ];
   const cell = (value: string | number | undefined) =>

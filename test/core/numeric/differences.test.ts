@@ -8,7 +8,11 @@ function axis(coordinates: number[], options: Partial<DifferenceAxis> = {}): Dif
   return { coordinates: Float64Array.from(coordinates), even: true, periodic: false, turn: 2 * Math.PI, ...options };
 }
 
-function derivative(values: number[], on: DifferenceAxis, points: StencilPoints): { out: Float64Array; widths: Int8Array } {
+function derivative(
+  values: number[],
+  on: DifferenceAxis,
+  points: StencilPoints,
+): { out: Float64Array; widths: Int8Array } {
   const out = new Float64Array(values.length);
   const widths = new Int8Array(values.length);
   differentiateLine(Float64Array.from(values), { offset: 0, stride: 1 }, planDifferences(on, points), out, widths);
@@ -18,16 +22,35 @@ function derivative(values: number[], on: DifferenceAxis, points: StencilPoints)
 const range = (count: number, step = 1) => Array.from({ length: count }, (_, i) => i * step);
 
 describe("differences along a line", () => {
-  test.each(stencilPoints)("a %i-point difference is exact inside for a polynomial of its order, and second order at the ends", (points) => {
-    const x = range(20, 0.1);
-    const inside = derivative(x.map((value) => value ** (points - 1)), axis(x), points).out;
-    const half = (points - 1) / 2;
-    for (let i = half; i < 20 - half; i++) {
-      expectClose(inside[i], (points - 1) * x[i] ** (points - 2), { relative: 1e-9, absolute: 1e-9, because: "cancellation" });
-    }
-    const parabola = derivative(x.map((value) => value * value), axis(x), points).out;
-    expectAllClose(parabola, x.map((value) => 2 * value), { absolute: 1e-12, because: "exact for a parabola, ends included" });
-  });
+  test.each(stencilPoints)(
+    "a %i-point difference is exact inside for a polynomial of its order, and second order at the ends",
+    (points) => {
+      const x = range(20, 0.1);
+      const inside = derivative(
+        x.map((value) => value ** (points - 1)),
+        axis(x),
+        points,
+      ).out;
+      const half = (points - 1) / 2;
+      for (let i = half; i < 20 - half; i++) {
+        expectClose(inside[i], (points - 1) * x[i] ** (points - 2), {
+          relative: 1e-9,
+          absolute: 1e-9,
+          because: "cancellation",
+        });
+      }
+      const parabola = derivative(
+        x.map((value) => value * value),
+        axis(x),
+        points,
+      ).out;
+      expectAllClose(
+        parabola,
+        x.map((value) => 2 * value),
+        { absolute: 1e-12, because: "exact for a parabola, ends included" },
+      );
+    },
+  );
 
   test.each([
     [3, 2],
@@ -37,7 +60,11 @@ describe("differences along a line", () => {
   ] as const)("the observed order of the %i-point difference is %i", (points, order) => {
     const errorOn = (count: number) => {
       const x = range(count, 2 / (count - 1));
-      const out = derivative(x.map((value) => Math.sin(3 * value)), axis(x), points).out;
+      const out = derivative(
+        x.map((value) => Math.sin(3 * value)),
+        axis(x),
+        points,
+      ).out;
       const half = (points - 1) / 2;
       let worst = 0;
       for (let i = half; i < count - half; i++) worst = Math.max(worst, Math.abs(out[i] - 3 * Math.cos(3 * x[i])));
@@ -50,7 +77,11 @@ describe("differences along a line", () => {
 
   test("uneven coordinates keep the order: a quartic is exact for five points on a stretched axis", () => {
     const x = range(16).map((i) => 0.1 * i + 0.01 * i * i);
-    const out = derivative(x.map((value) => value ** 4), axis(x, { even: false }), 5).out;
+    const out = derivative(
+      x.map((value) => value ** 4),
+      axis(x, { even: false }),
+      5,
+    ).out;
     for (let i = 2; i < 14; i++) {
       expectClose(out[i], 4 * x[i] ** 3, { relative: 1e-9, because: "cancellation in float64" });
     }
@@ -65,8 +96,16 @@ describe("differences along a line", () => {
 
   test("a descending axis gives the same derivative", () => {
     const x = range(12, 0.2);
-    const up = derivative(x.map((value) => value ** 3), axis(x), 7).out;
-    const down = derivative(x.toReversed().map((value) => value ** 3), axis(x.toReversed()), 7).out;
+    const up = derivative(
+      x.map((value) => value ** 3),
+      axis(x),
+      7,
+    ).out;
+    const down = derivative(
+      x.toReversed().map((value) => value ** 3),
+      axis(x.toReversed()),
+      7,
+    ).out;
     expectAllClose(down.toReversed(), up, { relative: 1e-12, because: "same arithmetic in another order" });
   });
 
@@ -96,8 +135,16 @@ describe("differences along a line", () => {
         (values, factor, points) => {
           const on = axis(range(values.length, 0.5));
           const once = derivative(values, on, points).out;
-          const scaled = derivative(values.map((value) => factor * value + 7), on, points).out;
-          expectAllClose(scaled, once.map((value) => factor * value), { absolute: 1e-10, because: "rounding" });
+          const scaled = derivative(
+            values.map((value) => factor * value + 7),
+            on,
+            points,
+          ).out;
+          expectAllClose(
+            scaled,
+            once.map((value) => factor * value),
+            { absolute: 1e-10, because: "rounding" },
+          );
           values.forEach((value, i) => {
             if (Number.isNaN(value)) expect(once[i]).toBeNaN();
           });

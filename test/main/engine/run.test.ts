@@ -28,7 +28,17 @@ interface Compared {
 describe("a run of the sample with every field", () => {
   test("writes the folder the command promises", () => {
     expect([...files].sort()).toEqual(
-      ["fields.nc", "figures/latitudes.svg", "jets.csv", "latitude-time.nc", "methods.md", "profile.csv", "summary.json"].sort(),
+      [
+        "fields.nc",
+        "figures/latitudes.svg",
+        "jets.csv",
+        "latitude-time.nc",
+        "methods.md",
+        "profile.csv",
+        "scales.csv",
+        "spectra.csv",
+        "summary.json",
+      ].sort(),
     );
   });
 

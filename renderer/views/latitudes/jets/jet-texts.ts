@@ -55,11 +55,12 @@ const lifeEnds: Readonly<Record<string, string>> = {
 
 /** What the eddy test says of a jet, in a sentence with both its numbers. */
 export function verdictText(verdict: JetVerdictRow, level: number): string {
-  const { oceansAsStrong, oceans, p, adjustedP } = verdict;
+  const { oceansAsStrong, oceans, p, adjustedP, leads } = verdict;
+  const beside = leads ? "" : " A stronger jet of its direction stands near by.";
   const said = verdict.verdict === "held" ? "Held" : "Not told apart from eddies";
   return (
     `${said}: ${oceansAsStrong} of ${oceans} oceans of random eddies have as strong a jet near by, p ${chanceText(p)}; ` +
-    `corrected over all jets ${chanceText(adjustedP)}, held below ${formatSignificant(100 * level, 2)}\u00a0%.`
+    `corrected over all jets ${chanceText(adjustedP)}, held below ${formatSignificant(100 * level, 2)}\u00a0%.${beside}`
   );
 }
 
