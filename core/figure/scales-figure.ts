@@ -9,7 +9,8 @@ import { forcingFacts, waveFacts } from "./scales/facts";
 import type { Drawing, ScalesInput, ScalesSize } from "./scales/input";
 import { type Cell, type CellId, scalesLayout } from "./scales/layout";
 import { periodPanel } from "./scales/period-panel";
-import { gradientPanel, meanFlowPanel, pushPanel } from "./scales/profile-panels";
+import { persistencePanel } from "./scales/persistence-panel";
+import { gradientPanel, longestRunPanel, meanFlowPanel, pushPanel } from "./scales/profile-panels";
 import { rulerPanel } from "./scales/ruler-panel";
 import { timeScaleBars } from "./scales/time-scale-bars";
 import { wavePanel } from "./scales/wave-panel";
@@ -32,6 +33,8 @@ const panels: Readonly<Record<CellId, (cell: Cell, drawing: Drawing) => PanelMar
   "mean-flow": meanFlowPanel,
   push: pushPanel,
   gradient: gradientPanel,
+  persistence: persistencePanel,
+  "longest-run": longestRunPanel,
   ruler: rulerPanel,
   facts: (cell, drawing) => factColumn(cell, forcingFacts(drawing.input.result), drawing),
   "fact-rows": (cell, drawing) => factRows(cell, forcingFacts(drawing.input.result), drawing),

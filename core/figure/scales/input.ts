@@ -6,6 +6,10 @@ import type { TypeSizes } from "../latitudes/layout";
 /** What the figure of scales is drawn from. SI units throughout. */
 export interface ScalesInput {
   readonly result: ScalesResult;
+  /** Of the columns of the result's maps: centres, degrees, rising. */
+  readonly longitude: Float64Array;
+  /** 1 where a cell of those maps ever has a value, else 0; latitude × longitude. */
+  readonly ocean: Uint8Array;
   readonly calendar: Calendar;
   /** "20–41° N, 150–125° W". */
   readonly region: string;

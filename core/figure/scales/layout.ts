@@ -15,6 +15,8 @@ export type CellId =
   | "mean-flow"
   | "push"
   | "gradient"
+  | "persistence"
+  | "longest-run"
   | "ruler"
   | "facts"
   | "fact-rows"
@@ -55,6 +57,9 @@ interface Row {
 }
 
 const profiles: readonly CellId[] = ["mean-flow", "push", "gradient"];
+const profilesAndMap: readonly CellId[] = [...profiles, "persistence", "longest-run"];
+/** A map beside profiles is so many times as wide as each of them. */
+const widthShares: Readonly<Partial<Record<CellId, number>>> = { persistence: 2 };
 
 function row(weight: number, ...stretches: readonly (CellId | Stretch)[]): Row {
   return {
@@ -68,33 +73,41 @@ function words(id: CellId, columns: number, factRows: number): Row {
   return { weight: 0, stretches: [{ ids: [id], columns }], factRows };
 }
 
+function tallWith(ids: readonly CellId[]): readonly Row[] {
+  return [
+    row(1.25, "energy", "wavelengths", "ruler"),
+    row(1, "period", "time-scales", "zonality"),
+    row(1, "waves", "drift-along", "drift-across"),
+    row(1, { ids, columns: 3 }),
+    words("fact-rows", 3, 2),
+  ];
+}
+
 const arrangements = {
   wide: [
     row(1, "energy", "wavelengths", "zonality", "ruler"),
     row(1, "waves", "drift-along", "drift-across", "period"),
     row(1, { ids: profiles, columns: 2 }, "facts", "time-scales"),
   ],
-  tall: [
-    row(1.25, "energy", "wavelengths", "ruler"),
-    row(1, "period", "time-scales", "zonality"),
-    row(1, "waves", "drift-along", "drift-across"),
-    row(1, { ids: profiles, columns: 3 }),
-    words("fact-rows", 3, 2),
-  ],
+  tall: tallWith(profilesAndMap),
+  narrow: tallWith(profiles),
   lengths: [row(1.15, "energy", "wavelengths", "ruler"), row(1, "period", "time-scales", "zonality")],
   waves: [row(1, "waves", "drift-along", "drift-across"), words("wave-facts", 3, 2)],
-  forcing: [row(1, { ids: profiles, columns: 3 }), words("fact-rows", 3, 2)],
+  forcing: [row(1, { ids: profilesAndMap, columns: 3 }), words("fact-rows", 3, 2)],
 } as const;
 
 /** Width over height above which all panels lie in four columns. */
 const wideShape = 1.15;
+/** Width over the size of headings under which five panels side by side do not hold their headings. */
+const narrowHeadings = 50;
 /** The widest label left of a frame. */
 const widestLabel = "40° N";
 const tickLength = 4;
 
-function arrangementOf({ part = "all", width, height }: ScalesSize): readonly Row[] {
+function arrangementOf({ part = "all", width, height }: ScalesSize, { heading }: TypeSizes): readonly Row[] {
   if (part !== "all") return arrangements[part];
-  return width > wideShape * height ? arrangements.wide : arrangements.tall;
+  if (width > wideShape * height) return arrangements.wide;
+  return width < narrowHeadings * heading ? arrangements.narrow : arrangements.tall;
 }
 
 /** Height that a fact takes: its label, its value, a note and the space to the next. */
@@ -106,7 +119,7 @@ export function factHeight({ heading, small }: TypeSizes): number {
 export function scalesLayout(size: ScalesSize): ScalesLayout {
   const sizes = typeSizes(size);
   const { heading, small } = sizes;
-  const rows = arrangementOf(size);
+  const rows = arrangementOf(size, sizes);
   const margin = Math.round(heading);
   const inset = Math.ceil(textWidth(widestLabel, small, 400) + tickLength + 6);
   const gap = Math.round(1.4 * heading);
@@ -156,15 +169,19 @@ interface Columns {
   readonly gap: number;
 }
 
-/** Frames of a stretch: on the grid's columns where there is one for each, else of one width with a gap between. */
+/** Frames of a stretch: on the grid's columns where there is one for each, else by their shares with a gap between. */
 function split(ids: readonly CellId[], columns: number, { left, pitch, inset, gap }: Columns) {
   const onGrid = ids.length === columns;
   const first = Math.round(left + inset);
   const last = Math.round(left + columns * pitch - gap);
-  const even = Math.floor((last - first - (ids.length - 1) * gap) / ids.length);
+  const shareOf = (id: CellId) => widthShares[id] ?? 1;
+  const shares = ids.reduce((sum, id) => sum + shareOf(id), 0);
+  const even = Math.floor((last - first - (ids.length - 1) * gap) / shares);
+  let next = first;
   return ids.map((id, index) => {
-    const x = onGrid ? Math.round(left + index * pitch + inset) : first + index * (even + gap);
-    const width = onGrid ? Math.round(left + (index + 1) * pitch - gap) - x : even;
+    const x = onGrid ? Math.round(left + index * pitch + inset) : next;
+    const width = onGrid ? Math.round(left + (index + 1) * pitch - gap) - x : even * shareOf(id);
+    next = x + width + gap;
     return { id, x, width, own: index === 0 || onGrid ? inset : gap };
   });
 }

@@ -27,8 +27,8 @@ interface Profile {
   readonly scale: number;
   readonly headings: readonly string[];
   readonly remarks: readonly string[];
-  /** Eastward rust and westward teal, or one ink. */
-  readonly signed: boolean;
+  /** A flow is rust eastward and teal westward about zero in the middle; a gradient warns below zero; a duration starts at zero. */
+  readonly kind: "flow" | "gradient" | "duration";
   /** Whether the latitude axis is labelled here. */
   readonly labelled: boolean;
 }
@@ -40,7 +40,7 @@ export function meanFlowPanel(cell: Cell, drawing: Drawing): PanelMarks {
     scale: 100,
     headings: ["Mean flow"],
     remarks: ["cm s⁻¹, eastward right", "cm s⁻¹"],
-    signed: true,
+    kind: "flow",
     labelled: true,
   });
 }
@@ -52,7 +52,7 @@ export function pushPanel(cell: Cell, drawing: Drawing): PanelMarks {
     scale: 100 * 86_400,
     headings: ["Push by the eddies", "Eddy push"],
     remarks: ["−∂(u’v’)/∂y, cm s⁻¹ per day", "cm s⁻¹ per day"],
-    signed: true,
+    kind: "flow",
     labelled: false,
   });
 }
@@ -64,7 +64,19 @@ export function gradientPanel(cell: Cell, drawing: Drawing): PanelMarks {
     scale: 1e11,
     headings: ["β − ∂²U/∂y²"],
     remarks: ["10⁻¹¹ m⁻¹ s⁻¹; below 0 may be unstable", "10⁻¹¹ m⁻¹ s⁻¹, unstable below 0", "10⁻¹¹ m⁻¹ s⁻¹"],
-    signed: false,
+    kind: "gradient",
+    labelled: false,
+  });
+}
+
+/** Longest run of one sign of the zonal-mean flow. */
+export function longestRunPanel(cell: Cell, drawing: Drawing): PanelMarks {
+  return profilePanel(cell, drawing, {
+    values: drawing.input.result.persistence.byLatitude.longestDays.map((days) => (days > 0 ? days : Number.NaN)),
+    scale: 1,
+    headings: ["Longest run of one sign", "Longest run"],
+    remarks: ["days, zonal mean of u", "days, zonal mean", "days"],
+    kind: "duration",
     labelled: false,
   });
 }
@@ -72,12 +84,12 @@ export function gradientPanel(cell: Cell, drawing: Drawing): PanelMarks {
 function profilePanel(cell: Cell, drawing: Drawing, profile: Profile): PanelMarks {
   const { sizes, theme } = drawing;
   const { latitude } = drawing.input.result;
-  const { values, scale, signed, labelled } = profile;
+  const { values, scale, kind, labelled } = profile;
   const [south, north] = outerEdges(latitude);
   const panel: PanelFrame = {
     id: cell.id,
     ...cell.frame,
-    horizontal: { kind: "linear", ...horizontalRange(values, signed) },
+    horizontal: { kind: "linear", ...horizontalRange(values, kind) },
     vertical: { kind: "latitude", from: north, to: south },
   };
   const zero = pixelX(panel, 0);
@@ -95,7 +107,7 @@ function profilePanel(cell: Cell, drawing: Drawing, profile: Profile): PanelMark
       headingMark(cell, profile.headings, drawing),
       subheadingMark(cell, profile.remarks, drawing),
       groundMark(panel, theme),
-      ...(signed ? [] : belowZero(panel, zero, drawing)),
+      ...(kind === "gradient" ? belowZero(panel, zero, drawing) : []),
       pathMark(`${cell.id}-zero`, linePath(zero, panel.y, zero, panel.y + panel.height), {
         stroke: theme.rule,
         strokeWidth: hairWidth,
@@ -103,7 +115,7 @@ function profilePanel(cell: Cell, drawing: Drawing, profile: Profile): PanelMark
       }),
       ...lineMarks(panel, profile, drawing),
       ...heldMarks(panel, drawing),
-      ...(signed ? [] : changeMarks(panel, zero, drawing)),
+      ...(kind === "gradient" ? changeMarks(panel, zero, drawing) : []),
       frameMark(panel, theme),
       ...leftTickMarks(panel, labelled ? latitudes : [], theme, sizes),
       ...bottomTickMarks(panel, ticks, [panel.x - 6, panel.x + panel.width + 6], theme, sizes),
@@ -112,19 +124,19 @@ function profilePanel(cell: Cell, drawing: Drawing, profile: Profile): PanelMark
   };
 }
 
-/** Symmetric about zero for a flow; from zero or below to the greatest value for a gradient. */
-function horizontalRange(values: Float64Array, signed: boolean): { from: number; to: number } {
+/** Symmetric about zero for a flow; from below zero for a gradient and from zero for a duration to the greatest value. */
+function horizontalRange(values: Float64Array, kind: Profile["kind"]): { from: number; to: number } {
   const finite = values.filter(Number.isFinite);
   const [least, most] = [Math.min(0, ...finite), Math.max(0, ...finite)];
-  if (signed) {
+  if (kind === "flow") {
     const reach = headroom * Math.max(-least, most) || 1;
     return { from: -reach, to: reach };
   }
   const span = most - least || 1;
-  return { from: least - 0.12 * span, to: most + (headroom - 1) * span };
+  return { from: kind === "duration" ? 0 : least - 0.12 * span, to: most + (headroom - 1) * span };
 }
 
-function lineMarks(panel: PanelFrame, { values, signed }: Profile, { input, theme }: Drawing): Mark[] {
+function lineMarks(panel: PanelFrame, { values, kind }: Profile, { input, theme }: Drawing): Mark[] {
   const ys = input.result.latitude.map((value) => pixelY(panel, value));
   const line = (id: string, kept: Float64Array, places: Float64Array, stroke: string) =>
     pathMark(
@@ -135,7 +147,7 @@ function lineMarks(panel: PanelFrame, { values, signed }: Profile, { input, them
       ),
       { stroke, strokeWidth: dataWidth, clip: panel.id },
     );
-  if (!signed) return [line("line", values, ys, theme.ink)];
+  if (kind !== "flow") return [line("line", values, ys, theme.ink)];
   const split = withZeros(values, ys);
   const side = (sign: 1 | -1) => split.values.map((value) => (sign * value >= 0 ? value : Number.NaN));
   return [line("eastward", side(1), split.places, theme.rust), line("westward", side(-1), split.places, theme.teal)];

@@ -10,5 +10,5 @@ export const cyclogeostrophicNorthwardVelocity = defineQuantity({
   linear: false,
   signed: true,
   inputs: ["u", "v"],
-  compute: (plane) => plane("cyclogeostrophic-flow").slice(plane("u").length),
+  compute: (plane) => plane("cyclogeostrophic-flow").slice(plane("u").length, 2 * plane("u").length),
 });

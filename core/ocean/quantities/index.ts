@@ -1,6 +1,7 @@
 import { cyclogeostrophicEastwardVelocity } from "./cyclogeostrophic-eastward-velocity";
 import { cyclogeostrophicNorthwardVelocity } from "./cyclogeostrophic-northward-velocity";
 import { cyclogeostrophicSpeed } from "./cyclogeostrophic-speed";
+import { cyclogeostrophicStatus } from "./cyclogeostrophic-status";
 import type { Quantity } from "./define";
 import { divergence } from "./divergence";
 import { eastwardVelocity } from "./eastward-velocity";
@@ -38,4 +39,5 @@ export const quantities: readonly Quantity[] = [
   cyclogeostrophicEastwardVelocity,
   cyclogeostrophicNorthwardVelocity,
   cyclogeostrophicSpeed,
+  cyclogeostrophicStatus,
 ];

@@ -6,8 +6,8 @@ import type { VelocityGradients } from "../velocity-gradients";
 import type { PlaneLookup } from "./define";
 
 /**
- * Planes that several quantities share and no menu shows; a lookup computes each once. "cyclogeostrophic-flow" holds u and,
- * behind it, v.
+ * Planes that several quantities share and no menu shows; a lookup computes each once. "cyclogeostrophic-flow" holds u,
+ * behind it v, and behind that what became of each cell (see `balance`).
  */
 export const intermediates: Readonly<
   Record<string, ((plane: PlaneLookup, geometry: GridGeometry) => Float64Array) | undefined>
@@ -18,10 +18,11 @@ export const intermediates: Readonly<
   "v-north": (plane, geometry) => northwardDerivative(plane("v"), geometry),
   "cyclogeostrophic-flow": (plane, geometry) => {
     const flow = cyclogeostrophicFlow(velocityFrom(plane), geometry, {}, gradientsFrom(plane));
-    const both = new Float64Array(2 * flow.u.length);
-    both.set(flow.u);
-    both.set(flow.v, flow.u.length);
-    return both;
+    const all = new Float64Array(3 * flow.u.length);
+    all.set(flow.u);
+    all.set(flow.v, flow.u.length);
+    all.set(flow.status, 2 * flow.u.length);
+    return all;
   },
 };
 

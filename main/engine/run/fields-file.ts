@@ -46,6 +46,7 @@ export async function writeFields(path: string, analysis: Analysis, pool: Worker
       coordinate("longitude", longitude.values, longitudeAttributes),
       ...variables,
       ...errorVariables(analysis),
+      ...persistenceVariables(analysis),
     ],
     attributes: globalAttributes(analysis, "Geostrophic fields"),
   });
@@ -111,6 +112,27 @@ function errorVariables({ errors, stages, loaded, open }: Analysis): NetcdfVaria
       gzipLevel,
     };
   });
+}
+
+/** How lastingly u keeps its sign: share of dates with the prevailing one, longest run of either. */
+function persistenceVariables({ scales, stages }: Analysis): NetcdfVariable[] {
+  const { rows, columns } = stages.record.cube;
+  const { share, longestDays, inBand, stepDays } = scales.persistence;
+  const of = `of eastward velocity ${inBand ? "in the band" : "as it stands"}, maps ${stepDays} days apart`;
+  const variable = (name: string, values: Float32Array, units: string, long: string): NetcdfVariable => ({
+    name,
+    type: "float32",
+    dimensions: ["latitude", "longitude"],
+    values,
+    attributes: { long_name: long, units },
+    fillValue: Number.NaN,
+    chunks: [rows, columns],
+    gzipLevel,
+  });
+  return [
+    variable("persistence_share", share.values, "1", `share of dates with the prevailing sign ${of}`),
+    variable("persistence_longest", longestDays.values, "day", `longest unbroken run of one sign ${of}`),
+  ];
 }
 
 function overTime(analysis: Analysis): NetcdfVariable[] {

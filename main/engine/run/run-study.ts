@@ -16,6 +16,7 @@ import { jetsTable } from "./jets-table";
 import { writeLatitudeTime } from "./latitude-time-file";
 import { methodsText } from "./methods-text";
 import { profileTable } from "./profile-table";
+import { responseTable } from "./response-table";
 import { scalesTable } from "./scales-table";
 import { spectraTable } from "./spectra-table";
 import { summaryOf } from "./summary";
@@ -48,6 +49,12 @@ export async function runStudy(
     await writeFileWhole(join(stage, "scales.csv"), scalesTable(analysis.scales));
     await writeFileWhole(join(stage, "spectra.csv"), spectraTable(analysis.scales));
     files.push("scales.csv", "spectra.csv");
+    const { filter, record } = analysis.stages;
+    if (filter) {
+      const table = responseTable(filter, record.time.step, record.cube.dates);
+      await writeFileWhole(join(stage, "filter-response.csv"), table);
+      files.push("filter-response.csv");
+    }
     await writeFileWhole(join(stage, "methods.md"), methodsText(analysis));
     files.push(...(await writeFigures(stage, analysis, workspace, job)));
     const inputs = await fingerprints(analysis.loaded.index, open.folder, () => job.throwIfCancelled());

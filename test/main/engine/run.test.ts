@@ -31,6 +31,7 @@ describe("a run of the sample with every field", () => {
       [
         "fields.nc",
         "figures/latitudes.svg",
+        "filter-response.csv",
         "jets.csv",
         "latitude-time.nc",
         "methods.md",
