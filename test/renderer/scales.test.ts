@@ -9,8 +9,8 @@ import { startHistory } from "../../renderer/state/history";
 import { scales, scalesKey } from "../../renderer/state/scales";
 import { partFor, sceneSize } from "../../renderer/views/scales/scales-parts";
 import { scalesReadout } from "../../renderer/views/scales/scales-readout";
-import { scalesTables } from "../../renderer/views/scales/scales-tables";
-import { madeScales } from "../core/figure/scales/made-scales";
+import { persistenceTable, scalesTables } from "../../renderer/views/scales/scales-tables";
+import { madeLongitude, madeScales } from "../core/figure/scales/made-scales";
 import { standInEngine, standInStudy } from "./stand-in-engine";
 
 const open = { study: standInStudy, folder: "/made-up", path: "/made-up/basin.study.json" };
@@ -171,7 +171,8 @@ describe("pages", () => {
 
 describe("numbers", () => {
   const result = madeScales();
-  const picture = { key: "", open, grid: "A", result, record: { time: { calendar: "standard" } } } as never;
+  const record = { time: { calendar: "standard" }, longitude: { values: madeLongitude } };
+  const picture = { key: "", open, grid: "A", result, record } as never;
 
   test.each([
     ["mean-flow", 0, 20.2, " cm s⁻¹", "20.13° N"],
@@ -187,6 +188,26 @@ describe("numbers", () => {
   test("the mean flow under the pointer is the nearest row's, in cm s⁻¹", () => {
     const value = Number(scalesReadout(picture, "mean-flow", 0, 20.2)?.value.replace("−", "-").split(" ")[0]);
     expect(value).toBeCloseTo(100 * result.forcing.meanFlow[0], 2);
+  });
+
+  test("persistence under the pointer is the nearest cell's and the nearest row's", () => {
+    const { share, byLatitude } = result.persistence;
+    const cell = scalesReadout(picture, "persistence", -140.1, 22.1);
+    // The 40th column lies at 140.125 W, the 9th row at 22.125 N (counted from one).
+    expect(cell?.place).toBe("22.13° N, 140.13° W");
+    expect(cell?.value).toContain(`${Math.round(100 * share.values[8 * share.columns + 39])} % of dates `);
+    const row = scalesReadout(picture, "longest-run", 100, 22.1);
+    expect(row?.value).toContain(`longest run ${Math.round(byLatitude.longestDays[8])} days`);
+    expect(scalesReadout(picture, "persistence", -126, 40.6)?.value).toBe("no values");
+  });
+
+  test("persistence in a table has a row for each latitude, the northernmost first", () => {
+    const { heads, rows } = persistenceTable(result);
+    const { share, longestDays } = result.persistence.byLatitude;
+    expect(rows).toHaveLength(result.latitude.length);
+    expect(rows.every((row) => row.length === heads.length)).toBe(true);
+    expect(rows[0][0]).toBe("40.88° N");
+    expect(rows[83].slice(2)).toEqual([`${Math.round(100 * share[0])} %`, `${Math.round(longestDays[0])} days`]);
   });
 
   test("nothing is told where there is no panel", () => {

@@ -18,7 +18,8 @@ export interface Fact {
 const centimetres = (speed: number) => `${formatSignificant(100 * speed, 2)} cm s⁻¹`;
 
 /** What the eddies do to the jets, and how lengths compare; what matters most first. */
-export function forcingFacts({ forcing, lengths, middleLatitude }: ScalesResult): Fact[] {
+export function forcingFacts(result: ScalesResult): Fact[] {
+  const { forcing, lengths, middleLatitude } = result;
   const spacing = lengths.meanSpacing > 0 ? lengths.meanSpacing : lengths.bandSpacing;
   const ratio = spacing / rhinesWavelength(lengths);
   const speedOf = lengths.rhinesSpeed === "total" ? "rms of the whole flow" : "rms of the eddies";
@@ -50,6 +51,7 @@ export function forcingFacts({ forcing, lengths, middleLatitude }: ScalesResult)
       ],
       notes: [deformationNote(lengths.deformationSource)],
     },
+    persistenceFact(result),
   ];
 }
 
@@ -81,6 +83,28 @@ function pushTexts({ perDay, correlation }: PushEstimate): string[] {
 function perDayText(perDay: Estimate): string {
   const size = Math.max(Math.abs(perDay.value), (perDay.high95 - perDay.low95) / 2 || 0);
   return size < 0.01 ? powerText(perDay) : estimateText(perDay, 1);
+}
+
+/** The longest run of one sign of the zonal mean, and how much of the time that latitude flows one way. */
+function persistenceFact({ latitude, persistence }: ScalesResult): Fact {
+  const { share, longestDays, sign } = persistence.byLatitude;
+  const row = longestDays.reduce((best, days, each) => (days > (longestDays[best] || 0) ? each : best), -1);
+  const head = { id: "persistence", label: "Longest run of one sign" };
+  if (row < 0) return { ...head, values: ["unknown"] };
+  const days = `${formatNumber(longestDays[row], 0)} days`;
+  return {
+    ...head,
+    values: [`${days} at ${formatLatitude(latitude[row], 1)}`, days],
+    notes: [`${shareText(share[row])} of dates there ${directionText(sign[row])}`],
+  };
+}
+
+export const shareText = (share: number): string => `${formatNumber(100 * share, 0)} %`;
+
+/** Of a prevailing sign. */
+export function directionText(sign: number): string {
+  if (sign === 0) return "neither way";
+  return sign > 0 ? "eastward" : "westward";
 }
 
 function deformationNote(source: ScalesResult["lengths"]["deformationSource"]): string {

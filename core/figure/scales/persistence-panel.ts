@@ -1,14 +1,14 @@
 import { paint } from "../colour/paint";
 import { formatSignificant } from "../format";
-import { bottomTickMarks, frameMark, leftTickMarks, roomiestTicks } from "../latitudes/axis-marks";
+import { bottomTickMarks, frameMark, roomiestTicks } from "../latitudes/axis-marks";
 import { rasterMark } from "../marks";
 import type { PanelFrame } from "../scene";
-import { latitudeTicks, longitudeTicks } from "../ticks";
+import { longitudeTicks } from "../ticks";
 import { colourKey, headingMark, missingPanel, type PanelMarks, subheadingMark } from "./cell-marks";
 import { heldMarks } from "./held-latitude";
 import type { Drawing } from "./input";
 import type { Cell } from "./layout";
-import { labelsUp, outerEdges, reachAcross, shownCells } from "./spans";
+import { outerEdges, reachAcross, shownCells } from "./spans";
 
 /** Of two signs one has half of the dates at least. */
 const limits = [0.5, 1] as const;
@@ -42,7 +42,6 @@ export function persistencePanel(cell: Cell, drawing: Drawing): PanelMarks {
       rasterMark(`${cell.id}-raster`, panel, columns, rows, pixels),
       ...heldMarks(panel, drawing),
       frameMark(panel, theme),
-      ...leftTickMarks(panel, unlabelled(latitudeTicks(south, north, labelsUp(cell, drawing))), theme, sizes),
       ...bottomTickMarks(panel, ticks, reachAcross(cell), theme, sizes),
     ],
   };
@@ -55,4 +54,24 @@ function remarks(isTold: boolean, { input }: Drawing): string[] {
   const every = `a map every ${formatSignificant(stepDays, 3)} days`;
   if (isTold) return [`${counted}; ${every}`, counted];
   return [`${meaning}; ${counted}`, meaning, "share of dates with one sign"];
+}
+
+/** The share as a raster with north at the top; land in its own grey, what lies between far columns as missing. */
+function picture(panel: PanelFrame, { input, theme }: Drawing) {
+  const { values, columns: stride } = input.result.persistence.share;
+  const { horizontal, vertical } = panel;
+  const across = shownCells(input.longitude, horizontal.from, horizontal.to, panel.width);
+  const up = shownCells(input.result.latitude, vertical.from, vertical.to, panel.height);
+  const shown = new Float32Array(across.length * up.length).fill(Number.NaN);
+  const ocean = new Uint8Array(shown.length).fill(1);
+  up.forEach((row, i) => {
+    across.forEach((column, j) => {
+      if (row < 0 || column < 0) return;
+      const [cell, pixel] = [row * stride + column, i * across.length + j];
+      shown[pixel] = values[cell];
+      ocean[pixel] = input.ocean[cell];
+    });
+  });
+  const blank = { missing: theme.missing, land: theme.land, ocean };
+  return { columns: across.length, rows: up.length, pixels: paint(shown, limits, theme.sequential, blank) };
 }

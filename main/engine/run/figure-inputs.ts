@@ -55,6 +55,8 @@ export function scalesInput(analysis: Analysis): ScalesInput {
   const axes = { ...stages.record.axes, time: stages.record.time };
   return {
     result: scales,
+    longitude: axes.longitude.values,
+    ocean: stages.record.ocean,
     calendar: axes.time.calendar,
     region: boxText(axes),
     grid: gridText(gridLabel(analysis), axes),

@@ -30,6 +30,8 @@ export function ScalesFigure({ picture, part, pane, ground }: ScalesFigureProps)
     const { result, record, open, grid } = picture;
     const input = {
       result,
+      longitude: record.longitude.values,
+      ocean: record.ocean,
       calendar: record.time.calendar,
       region: boxText(record),
       grid: gridTitle(open.study, grid, record),

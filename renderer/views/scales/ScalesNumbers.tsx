@@ -1,7 +1,7 @@
 import { useState } from "react";
 import type { ScalesPicture } from "../../state/scales";
 import { Units } from "../../text/Units";
-import { type NumberRow, scalesTables } from "./scales-tables";
+import { type LatitudeTable, type NumberRow, persistenceTable, scalesTables } from "./scales-tables";
 
 /** The figure's numbers as tables, and what rests on memory or is missing; built only while it is open. */
 export function ScalesNumbers({ picture }: { readonly picture: ScalesPicture }) {
@@ -26,6 +26,7 @@ export function ScalesNumbers({ picture }: { readonly picture: ScalesPicture }) 
           {scalesTables(picture.result).map(({ title, rows }) => (
             <Table key={title} title={title} rows={rows} />
           ))}
+          <ByLatitude {...persistenceTable(picture.result)} />
         </section>
       ) : null}
     </details>
@@ -57,6 +58,33 @@ function Table({ title, rows }: { readonly title: string; readonly rows: readonl
               <Units text={limits} />
             </td>
             <td>{basis}</td>
+          </tr>
+        ))}
+      </tbody>
+    </table>
+  );
+}
+
+function ByLatitude({ title, heads, rows }: LatitudeTable) {
+  return (
+    <table className="table">
+      <caption>{title}</caption>
+      <thead>
+        <tr>
+          {heads.map((head) => (
+            <th key={head} scope="col">
+              {head}
+            </th>
+          ))}
+        </tr>
+      </thead>
+      <tbody>
+        {rows.map(([latitude, ...texts]) => (
+          <tr key={latitude}>
+            <th scope="row">{latitude}</th>
+            {texts.map((text, index) => (
+              <td key={heads[index + 1]}>{text}</td>
+            ))}
           </tr>
         ))}
       </tbody>

@@ -1,5 +1,6 @@
 import { formatLatitude, formatLongitude, formatNumber, formatSignificant } from "../../../core/figure/format";
 import { nearestCell } from "../../../core/figure/resample";
+import { directionText, shareText as percentText } from "../../../core/figure/scales/facts";
 import { formatDate } from "../../../core/figure/time-ticks";
 import type { Plane } from "../../../core/model/results";
 import type { Drift, ScalesResult, WavenumberCurve } from "../../../core/model/scales-result";
@@ -51,11 +52,34 @@ const readers: Readonly<Record<string, Reader>> = {
     profileText(result, result.forcing.convergence, up, (value) => `${formatNumber(8.64e6 * value, 4)} cm s⁻¹ per day`),
   gradient: ({ result }, _, up) =>
     profileText(result, result.forcing.gradient, up, (value) => `${formatNumber(1e11 * value, 2)} × 10⁻¹¹ m⁻¹ s⁻¹`),
+  persistence: ({ result, record }, across, up) => {
+    const { share, longestDays, sign } = result.persistence;
+    const [row, column] = [nearestCell(result.latitude, up), nearestCell(record.longitude.values, across)];
+    const cell = row * share.columns + column;
+    return {
+      value: persistenceText(share.values[cell], sign[cell], longestDays.values[cell]),
+      place: `${formatLatitude(result.latitude[row], 2)}, ${formatLongitude(record.longitude.values[column], 2)}`,
+    };
+  },
+  "longest-run": ({ result }, _, up) => {
+    const { share, longestDays, sign } = result.persistence.byLatitude;
+    const row = nearestCell(result.latitude, up);
+    return {
+      value: persistenceText(share[row], sign[row], longestDays[row]),
+      place: formatLatitude(result.latitude[row], 2),
+    };
+  },
 };
 
 /** Value and place under the pointer, given in the panel's own units; null where a panel has nothing to tell. */
 export function scalesReadout(picture: ScalesPicture, panel: string, across: number, up: number): ScalesReadout | null {
   return readers[panel]?.(picture, across, up) ?? null;
+}
+
+/** "82 % of dates eastward, longest run 450 days". */
+function persistenceText(share: number, sign: number, days: number): string {
+  if (!Number.isFinite(share)) return "no values";
+  return `${percentText(share)} of dates ${directionText(sign)}, longest run ${formatNumber(days, 0)} days`;
 }
 
 function cellOf(plane: Plane, rows: Float64Array, columns: Float64Array, up: number, across: number): number {

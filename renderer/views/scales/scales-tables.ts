@@ -1,5 +1,6 @@
 import { formatLatitude, formatNumber, formatSignificant } from "../../../core/figure/format";
 import { powerText } from "../../../core/figure/scales/estimate-text";
+import { directionText, shareText } from "../../../core/figure/scales/facts";
 import { signChangesText } from "../../../core/figure/scales/profile-panels";
 import type { Drift, Estimate, ScalesResult } from "../../../core/model/scales-result";
 
@@ -16,6 +17,14 @@ export interface NumberTable {
   readonly rows: readonly NumberRow[];
 }
 
+/** Numbers by latitude, north first as on the figure. */
+export interface LatitudeTable {
+  readonly title: string;
+  readonly heads: readonly string[];
+  /** The latitude, then a text for each other head. */
+  readonly rows: readonly (readonly string[])[];
+}
+
 const none = "–";
 
 /** Lengths, drift and waves, forcing and energy: what the figure draws, as rows. */
@@ -25,6 +34,22 @@ export function scalesTables(result: ScalesResult): NumberTable[] {
     { title: `Drift, and waves at ${formatLatitude(result.alongLatitude, 2)}`, rows: driftRows(result) },
     { title: "Forcing and energy", rows: forcingRows(result) },
   ];
+}
+
+/** How lastingly the zonal-mean flow of each latitude keeps its sign. */
+export function persistenceTable({ latitude, persistence: { byLatitude, inBand } }: ScalesResult): LatitudeTable {
+  const { share, longestDays, sign } = byLatitude;
+  const rows = [...latitude.keys()].sort((a, b) => latitude[b] - latitude[a]);
+  return {
+    title: `Persistence of the zonal mean of u${inBand ? " in the band" : ""}`,
+    heads: ["Latitude", "Prevailing", "Share of dates with it", "Longest run of one sign"],
+    rows: rows.map((row) => [
+      formatLatitude(latitude[row], 2),
+      ...(Number.isFinite(share[row])
+        ? [directionText(sign[row]), shareText(share[row]), `${formatNumber(longestDays[row], 0)} days`]
+        : [none, none, none]),
+    ]),
+  };
 }
 
 function estimateRow(name: string, { value, low95, high95 }: Estimate, scale: number, units: string, basis: string) {

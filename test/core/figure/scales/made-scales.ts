@@ -8,6 +8,12 @@ const alone = (value: number): Estimate => estimate(value, Number.NaN);
 
 const rows = 84;
 const latitude = axis(20.125, 0.25, rows);
+const columns = 100;
+export const madeLongitude = axis(-149.875, 0.25, columns);
+/** Land in the north-east. */
+export const madeOcean = Uint8Array.from({ length: rows * columns }, (_, cell) =>
+  Math.floor(cell / columns) > 70 && cell % columns > 80 ? 0 : 1,
+);
 
 /** A pattern that moves with `speed` (m s-1) along positions `metres` apart. */
 function movingPattern(quantity: string, position: Float64Array, metres: number, speed: number): Drift {
@@ -160,7 +166,7 @@ export function madeScales(): ScalesResult {
     },
     energy: { total: 0.0033, weeksDays: 30, monthsDays: 540, weeksShare: 0.12, monthsShare: 0.5, longerShare: 0.38 },
     drift: {
-      alongLatitude: movingPattern("v", axis(-149.875, 0.25, 100), 23_900, -0.024),
+      alongLatitude: movingPattern("v", madeLongitude, 23_900, -0.024),
       acrossLatitudes: movingPattern("u", latitude, 27_800, 0.006),
     },
     waves: {
@@ -186,15 +192,30 @@ export function madeScales(): ScalesResult {
       gradient: profile.map((value, row) => (row < 2 ? Number.NaN : 1.6e-11 + 3e-10 * value)),
       signChanges: [23.4, 28.1],
     },
-    persistence: {
-      inBand: true,
-      stepDays: 9,
-      share: { rows: 0, columns: 0, values: new Float32Array(0) },
-      longestDays: { rows: 0, columns: 0, values: new Float32Array(0) },
-      sign: new Int8Array(0),
-      byLatitude: { share: nan, longestDays: nan, sign: new Int8Array(rows) },
-    },
+    persistence: persistence(profile),
     notes: ["The deformation radius is from a built-in table of zonal means that is off by up to 15 %."],
+  };
+}
+
+/** Steady where the mean flow is strong; more so in the east. */
+function persistence(profile: Float64Array): ScalesResult["persistence"] {
+  const strength = profile.map((value) => Math.abs(value) / 0.06);
+  const share = Float32Array.from({ length: rows * columns }, (_, cell) =>
+    madeOcean[cell] === 0
+      ? Number.NaN
+      : 0.5 + 0.5 * strength[Math.floor(cell / columns)] * ((cell % columns) / columns),
+  );
+  return {
+    inBand: true,
+    stepDays: 9,
+    share: { rows, columns, values: share },
+    longestDays: { rows, columns, values: share.map((value) => 900 * (value - 0.5)) },
+    sign: Int8Array.from({ length: rows * columns }, (_, cell) => Math.sign(profile[Math.floor(cell / columns)])),
+    byLatitude: {
+      share: strength.map((value) => 0.5 + 0.4 * value),
+      longestDays: strength.map((value) => 1230 * value),
+      sign: Int8Array.from(profile, Math.sign),
+    },
   };
 }
 
@@ -247,6 +268,12 @@ export function bareScales(): ScalesResult {
       conversion: unknown,
       signChanges: [],
     },
+    persistence: {
+      ...made.persistence,
+      share: { rows, columns, values: new Float32Array(rows * columns).fill(Number.NaN) },
+      longestDays: { rows, columns, values: new Float32Array(rows * columns).fill(Number.NaN) },
+      byLatitude: { share: nan, longestDays: nan, sign: new Int8Array(rows) },
+    },
     notes: Object.values(reasons),
   };
 }
@@ -254,6 +281,8 @@ export function bareScales(): ScalesResult {
 export function madeInput(result: ScalesResult = madeScales(), rest: Partial<ScalesInput> = {}): ScalesInput {
   return {
     result,
+    longitude: madeLongitude,
+    ocean: madeOcean,
     calendar: "standard",
     region: "20–41° N, 150–125° W",
     grid: "Grid A · 0.25° · 3 d",

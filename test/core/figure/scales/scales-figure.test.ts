@@ -2,10 +2,11 @@ import { describe, expect, test } from "vitest";
 import { bytesFromHex } from "../../../../core/figure/colour/hex";
 import { paper } from "../../../../core/figure/colour/theme";
 import { pixelX, pixelY } from "../../../../core/figure/panel";
+import { printSize } from "../../../../core/figure/print-size";
 import { scalesScene } from "../../../../core/figure/scales-figure";
 import type { PanelFrame, PathMark, RasterMark, Scene, TextMark } from "../../../../core/figure/scene";
 import { textWidth } from "../../../../core/figure/text-width";
-import { bareScales, madeInput, madeScales, reasons } from "./made-scales";
+import { bareScales, madeInput, madeLongitude, madeScales, reasons } from "./made-scales";
 
 const size = { width: 1440, height: 780 };
 const made = madeScales();
@@ -40,10 +41,10 @@ function points(mark: PathMark): [number, number][] {
 }
 
 /** Colour of the raster's cell under a place of its panel, as "r,g,b". */
-function colourAt(id: string, across: number, up: number): number[] {
-  const { x, y, width, height, columns, rows, pixels } = raster(`${id}-raster`);
-  const column = Math.floor(((pixelX(panel(id), across) - x) / width) * columns);
-  const row = Math.floor(((pixelY(panel(id), up) - y) / height) * rows);
+function colourAt(id: string, across: number, up: number, of: Scene = scene): number[] {
+  const { x, y, width, height, columns, rows, pixels } = raster(`${id}-raster`, of);
+  const column = Math.floor(((pixelX(panel(id, of), across) - x) / width) * columns);
+  const row = Math.floor(((pixelY(panel(id, of), up) - y) / height) * rows);
   return [...pixels.subarray(4 * (row * columns + column), 4 * (row * columns + column) + 3)];
 }
 
@@ -176,6 +177,70 @@ describe("profiles", () => {
       expect(line.stroke).toBe(paper.amber);
       expect(points(line)[0][1]).toBeCloseTo(pixelY(panel(id, held), 33.3), 1);
     }
+  });
+});
+
+describe("persistence", () => {
+  const page = scalesScene(madeInput(made, { heldLatitude: 33.3 }), { ...size, part: "forcing" });
+  const { share, byLatitude } = made.persistence;
+
+  test("map and longest run share the profiles' latitude axis and frame height", () => {
+    const first = panel("mean-flow", page);
+    for (const other of [panel("persistence", page), panel("longest-run", page)]) {
+      expect(other.vertical).toEqual(first.vertical);
+      expect([other.y, other.height]).toEqual([first.y, first.height]);
+    }
+  });
+
+  test("the held latitude goes through both", () => {
+    for (const id of ["persistence", "longest-run"]) {
+      expect(points(path(`${id}-held`, page))[0][1]).toBeCloseTo(pixelY(panel(id, page), 33.3), 1);
+    }
+  });
+
+  test("colours run from a half to one, land is grey", () => {
+    const table = paper.sequential.table;
+    for (const [row, column] of [
+      [10, 0],
+      [5, 99],
+      [40, 50],
+    ]) {
+      const value = share.values[row * share.columns + column];
+      const entry = Math.min(table.length / 4 - 1, Math.floor(((value - 0.5) / 0.5) * (table.length / 4)));
+      const colour = [...table.subarray(4 * entry, 4 * entry + 3)];
+      expect(colourAt("persistence", madeLongitude[column], made.latitude[row], page)).toEqual(colour);
+    }
+    expect(colourAt("persistence", madeLongitude[95], made.latitude[80], page)).toEqual([...bytesFromHex(paper.land)]);
+    expect([text("persistence-key-lower", page).text, text("persistence-key-upper", page).text]).toEqual(["0.5", "1"]);
+  });
+
+  test("whatever the width, heading or the line under it say what the colours mean, with a key", () => {
+    for (const width of [720, 1100, 1440, 2200]) {
+      const drawn = scalesScene(madeInput(), { width, height: 500, part: "forcing" });
+      const words = `${text("persistence-heading", drawn).text} ${text("persistence-subheading", drawn).text}`;
+      expect(words).toMatch(/share of dates with (the prevailing|one) sign/);
+      expect(raster("persistence-key", drawn).columns).toBeGreaterThan(100);
+    }
+  });
+
+  test("the longest run starts at zero and is drawn at each latitude", () => {
+    const frame = panel("longest-run", page);
+    expect(frame.horizontal.from).toBe(0);
+    const drawn = points(path("longest-run-line", page));
+    expect(drawn[12][0]).toBeCloseTo(pixelX(frame, byLatitude.longestDays[12]), 1);
+    expect(drawn[12][1]).toBeCloseTo(pixelY(frame, made.latitude[12]), 1);
+  });
+
+  test("stands in print where five panels hold their headings, not where type would crowd them", () => {
+    const ids = (widthMm: number) => scalesScene(madeInput(), printSize(widthMm, 1.35)).panels.map(({ id }) => id);
+    expect(ids(174)).toEqual(expect.arrayContaining(["persistence", "longest-run"]));
+    expect(ids(127)).not.toContain("persistence");
+  });
+
+  test("a record without values says so", () => {
+    const bare = scalesScene(madeInput(bareScales()), { ...size, part: "forcing" });
+    expect(text("persistence-missing-0", bare).text).toBe("No cell has values.");
+    expect(text("fact-rows-persistence", bare).text).toBe("unknown");
   });
 });
 
