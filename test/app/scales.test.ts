@@ -71,13 +71,14 @@ test("the pages are reached by the arrow keys and each fits", async () => {
   for (const [name, panel] of [
     ["Lengths", "zonality"],
     ["Waves and drift", "drift-along"],
-    ["Eddies and jets", "gradient"],
+    ["Eddies and jets", "longest-run"],
   ]) {
     await page.keyboard.press("ArrowRight");
     expect(await page.getByRole("radio", { name }).isChecked()).toBe(true);
     await page.locator(`.scales-scene [data-panel="${panel}"]`).waitFor();
     expect(await cutOff()).toEqual([]);
   }
+  expect((await panelPixels(page, "persistence")).colours).toBeGreaterThan(10);
 });
 
 test("the pointer tells value and place", async () => {
@@ -90,8 +91,8 @@ test("the numbers stand in tables behind a disclosure that the keyboard opens", 
   const { page } = shown;
   await page.locator(".scales-numbers summary").focus();
   await page.keyboard.press("Enter");
-  for (const caption of ["Lengths, as half-wavelengths", "Forcing and energy"]) {
-    expect(await page.getByRole("table", { name: caption }).isVisible()).toBe(true);
+  for (const caption of ["Lengths, as half-wavelengths", "Forcing and energy", /^Persistence of the zonal mean/]) {
+    await page.getByRole("table", { name: caption }).waitFor();
   }
   expect(
     await page

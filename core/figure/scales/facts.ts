@@ -85,17 +85,26 @@ function perDayText(perDay: Estimate): string {
   return size < 0.01 ? powerText(perDay) : estimateText(perDay, 1);
 }
 
-/** The longest run of one sign of the zonal mean, and how much of the time that latitude flows one way. */
+/** The longest run of one sign of the zonal mean and where; rows that keep theirs through the whole record are as long. */
 function persistenceFact({ latitude, persistence }: ScalesResult): Fact {
   const { share, longestDays, sign } = persistence.byLatitude;
-  const row = longestDays.reduce((best, days, each) => (days > (longestDays[best] || 0) ? each : best), -1);
+  const longest = Math.max(0, ...longestDays.filter(Number.isFinite));
+  const rows = [...latitude.keys()].filter((row) => longest > 0 && longestDays[row] === longest);
   const head = { id: "persistence", label: "Longest run of one sign" };
-  if (row < 0) return { ...head, values: ["unknown"] };
-  const days = `${formatNumber(longestDays[row], 0)} days`;
+  if (rows.length === 0) return { ...head, values: ["unknown"] };
+  const days = `${formatNumber(longest, 0)} days`;
+  if (rows.length > 1) {
+    const known = share.filter(Number.isFinite).sort();
+    return {
+      ...head,
+      values: [`${days}, on ${rows.length} of ${known.length} rows`, days],
+      notes: [`the median row keeps its sign ${shareText(known[Math.floor(known.length / 2)])} of the time`],
+    };
+  }
   return {
     ...head,
-    values: [`${days} at ${formatLatitude(latitude[row], 1)}`, days],
-    notes: [`${shareText(share[row])} of dates there ${directionText(sign[row])}`],
+    values: [`${days} at ${formatLatitude(latitude[rows[0]], 1)}`, days],
+    notes: [`${shareText(share[rows[0]])} of dates there ${directionText(sign[rows[0]])}`],
   };
 }
 

@@ -49,9 +49,10 @@ export function meanFlowPanel(cell: Cell, drawing: Drawing): PanelMarks {
 export function pushPanel(cell: Cell, drawing: Drawing): PanelMarks {
   return profilePanel(cell, drawing, {
     values: drawing.input.result.forcing.convergence,
-    scale: 100 * 86_400,
+    // In thousandths, so that three short labels fit under a narrow panel.
+    scale: 1000 * 100 * 86_400,
     headings: ["Push by the eddies", "Eddy push"],
-    remarks: ["−∂(u’v’)/∂y, cm s⁻¹ per day", "cm s⁻¹ per day"],
+    remarks: ["−∂(u’v’)/∂y, 10⁻³ cm s⁻¹ per day", "10⁻³ cm s⁻¹ per day", "10⁻³ cm s⁻¹ d⁻¹"],
     kind: "flow",
     labelled: false,
   });

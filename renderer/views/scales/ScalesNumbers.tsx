@@ -81,7 +81,7 @@ function ByLatitude({ title, heads, rows }: LatitudeTable) {
       <tbody>
         {rows.map(([latitude, ...texts]) => (
           <tr key={latitude}>
-            <th scope="row">{latitude}</th>
+            <td>{latitude}</td>
             {texts.map((text, index) => (
               <td key={heads[index + 1]}>{text}</td>
             ))}

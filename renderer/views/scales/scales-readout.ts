@@ -49,7 +49,12 @@ const readers: Readonly<Record<string, Reader>> = {
   "mean-flow": ({ result }, _, up) =>
     profileText(result, result.forcing.meanFlow, up, (value) => `${formatNumber(100 * value, 2)} cm s⁻¹`),
   push: ({ result }, _, up) =>
-    profileText(result, result.forcing.convergence, up, (value) => `${formatNumber(8.64e6 * value, 4)} cm s⁻¹ per day`),
+    profileText(
+      result,
+      result.forcing.convergence,
+      up,
+      (value) => `${formatNumber(8.64e9 * value, 1)} × 10⁻³ cm s⁻¹ per day`,
+    ),
   gradient: ({ result }, _, up) =>
     profileText(result, result.forcing.gradient, up, (value) => `${formatNumber(1e11 * value, 2)} × 10⁻¹¹ m⁻¹ s⁻¹`),
   persistence: ({ result, record }, across, up) => {

@@ -164,6 +164,17 @@ describe("profiles", () => {
     for (const [x] of points(path("mean-flow-westward"))) expect(x).toBeLessThanOrEqual(zero + 0.01);
   });
 
+  test("at least two labels stand under each, also where they are narrow and in print", () => {
+    for (const narrow of [{ width: 720, height: 400, part: "forcing" } as const, printSize(174, 1.35)]) {
+      const drawn = scalesScene(madeInput(), narrow);
+      for (const id of ["mean-flow", "push", "gradient", "persistence", "longest-run"]) {
+        expect(
+          drawn.marks.filter((mark) => mark.kind === "text" && mark.id.startsWith(`${id}-x-`)).length,
+        ).toBeGreaterThan(1);
+      }
+    }
+  });
+
   test("sign changes of the gradient are marked at their latitudes", () => {
     const ys = points(path("gradient-changes")).map(([, y]) => y);
     expect([...new Set(ys)]).toHaveLength(2);
@@ -260,6 +271,17 @@ describe("words", () => {
     expect(text("facts-conversion").text).toBe("(3.1 ± 0.9) × 10⁻⁹ W kg⁻¹");
     expect(text("facts-sign-changes").text).toBe("at 23.4° N and 28.1° N");
     expect(text("facts-deformation-note").text).toBe("table, from memory, ±15 %");
+  });
+
+  test("the longest run tells its latitude, or on how many rows it is as long", () => {
+    const { byLatitude } = made.persistence;
+    const told = (longestDays: Float64Array) => {
+      const persistence = { ...made.persistence, byLatitude: { ...byLatitude, longestDays } };
+      const drawn = scalesScene(madeInput({ ...made, persistence }), { ...size, part: "forcing" });
+      return text("fact-rows-persistence", drawn).text;
+    };
+    expect(told(byLatitude.longestDays.map((_, row) => (row === 19 ? 600 : 30)))).toBe("600 days at 24.9° N");
+    expect(told(byLatitude.longestDays.map((_, row) => (row < 5 ? 900 : 30)))).toBe("900 days, on 5 of 84 rows");
   });
 
   test("what a record lacks is a sentence with its reason, not an empty frame", () => {
