@@ -1,4 +1,6 @@
 import { formatDay } from "../model/calendar";
+import { Fault } from "../model/errors";
+import { bridgedDates, timeFilter } from "./band";
 import { geometryOf } from "./geometry";
 import type { HeightRecord } from "./record";
 import { shortScaleChange } from "./scales/short-scale-change";
@@ -72,12 +74,30 @@ const rules: Readonly<Record<string, Rule>> = {
     const why = equatorNote ? ` The blend asked for was not made: ${equatorNote}.` : "";
     return `${rows} rows ${belt} are blank: f vanishes there.${why}`;
   },
-  gaps: (_, { hasData, time }) => {
+  gaps: ({ band }, { hasData, time }) => {
     const missing = hasData.length - hasData.reduce((sum, flag) => sum + flag, 0);
     if (missing === 0) return null;
     const first = formatDay(time.calendar, time.values[hasData.indexOf(0)]);
-    return `${missing} of ${hasData.length} dates have no data (the first is ${first}); they stay blank and the filter leans on their neighbours.`;
+    const bridged = bridgedDates(band, { time, hasData }).reduce((sum, flag) => sum + flag, 0);
+    const reached =
+      band.filter === "none"
+        ? ""
+        : bridged === missing
+          ? " and the filter bridges them"
+          : bridged === 0
+            ? " and the filter stops at them"
+            : `; the filter bridges ${bridged} of them and stops at the others`;
+    return `${missing} of ${hasData.length} dates have no data (the first is ${first}): they stay blank${reached}.`;
   },
+  unfiltered: ({ band }, { hasData, time }) => {
+    const blank = datesWithoutBand(band, time, hasData);
+    if (blank === 0) return null;
+    return `${blank} of ${hasData.reduce((sum, flag) => sum + flag, 0)} dates with data have no value in the band: they stand between gaps too far apart to bridge, in stretches too short for this filter. A shorter longest period, or longer bridges, brings them back.`;
+  },
+  irregular: (_, { time, cube }) =>
+    cube.dates > 2 && !time.even
+      ? "The dates are on no regular step: nothing can be filtered in time, and the spectrum is a Lomb–Scargle one."
+      : null,
   space: ({ space }) =>
     filtersInSpace(space)
       ? "Heights are filtered in space before currents are taken: speeds, energies and zonal means are of what is left."
@@ -93,6 +113,17 @@ const rules: Readonly<Record<string, Rule>> = {
       : null;
   },
 };
+
+/** Dates with data in stretches that the study's filter is too long for; 0 where it cannot be made at all, which is told elsewhere. */
+function datesWithoutBand(band: Study["band"], time: HeightRecord["time"], hasData: Uint8Array): number {
+  try {
+    const share = timeFilter(band, time)?.share(hasData);
+    return share ? share.reduce((sum, value, date) => sum + (hasData[date] && value === 0 ? 1 : 0), 0) : 0;
+  } catch (error) {
+    if (error instanceof Fault) return 0;
+    throw error;
+  }
+}
 
 /** The cautions that apply to this study and record, each a sentence with its numbers. */
 export function cautionsFor(study: Study, record: HeightRecord): Caution[] {

@@ -23,9 +23,9 @@ type Samples = ArrayLike<number> & { subarray(from: number, to: number): ArrayLi
 const usual: SpectrumSettings = { taper: "hann", overlap: 0.5, detrend: "constant", longestSegmentDays: 3000 };
 
 /**
- * Spectrum by period of a region: Welch spectra (Hann and half overlap unless told otherwise) of the sampled cells' anomalies, averaged with the cells' weights. Cells with
- * a gap longer than five samples leave out the segments it falls in; no segment is longer than the longest stretch without
- * such a gap. No frequencies at all where every stretch is shorter than eight samples.
+ * Spectrum by period of a region: Welch spectra (Hann and half overlap unless told otherwise) of the sampled cells'
+ * anomalies, averaged with the cells' weights and numbers of segments. A gap longer than five samples cuts a cell's series
+ * into stretches; no segment is longer than the longest stretch. No frequencies at all where every stretch is shorter than eight samples.
  */
 export function regionSpectrum(
   quantity: Described,
@@ -41,16 +41,19 @@ export function regionSpectrum(
     const series = Float64Array.from(samples.subarray(cell * dates, (cell + 1) * dates));
     return bridgeGaps(removeBackground(series, basis), bridgedSamples).values;
   });
-  const whole = anomalies.reduce((most, values) => Math.max(most, longestStretch(values)), 0);
+  const whole = anomalies.flatMap(stretches).reduce((most, { length }) => Math.max(most, length), 0);
   const segment = Math.min(whole, Math.max(fewestSamples, Math.floor(settings.longestSegmentDays / stepDays)));
   const mean = new WeightedMean();
   let segments = 0;
   for (const [cell, values] of (segment < fewestSamples ? [] : anomalies).entries()) {
     const { overlap, detrend } = settings;
-    const spectrum = welchSpectrum(trimmed(values), stepDays, { segment, overlap, detrend, taper });
-    if (spectrum.segments === 0) continue;
-    if (mean.add(spectrum.frequency, spectrum.density, cellWeights[cell]))
-      segments = Math.max(segments, spectrum.segments);
+    let own = 0;
+    for (const stretch of stretches(values).filter(({ length }) => length >= segment)) {
+      const spectrum = welchSpectrum(stretch, stepDays, { segment, overlap, detrend, taper });
+      mean.add(spectrum.frequency, spectrum.density, cellWeights[cell] * spectrum.segments);
+      own += spectrum.segments;
+    }
+    segments = Math.max(segments, own);
   }
   const window = `${taperName(taper)}, overlap ${Math.round(100 * settings.overlap)} %`;
   return {
@@ -136,22 +139,14 @@ function unitsOf({ units }: Described): string {
   return units === "1" ? "day" : `(${units})2 day`;
 }
 
-/** Most samples in a row that are there. */
-function longestStretch(series: Float64Array): number {
-  let longest = 0;
-  let run = 0;
-  for (const value of series) {
-    run = Number.isNaN(value) ? 0 : run + 1;
-    longest = Math.max(longest, run);
-  }
-  return longest;
-}
-
-/** Without the missing samples at both ends. */
-function trimmed(series: Float64Array): Float64Array {
+/** The runs of samples that are there. */
+function stretches(series: Float64Array): Float64Array[] {
+  const found: Float64Array[] = [];
   let from = 0;
-  let to = series.length;
-  while (from < to && Number.isNaN(series[from])) from++;
-  while (to > from && Number.isNaN(series[to - 1])) to--;
-  return series.subarray(from, to);
+  for (let i = 0; i <= series.length; i++) {
+    if (i < series.length && !Number.isNaN(series[i])) continue;
+    if (i > from) found.push(series.subarray(from, i));
+    from = i + 1;
+  }
+  return found;
 }

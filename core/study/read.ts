@@ -61,7 +61,11 @@ function studyFault(issue: z.core.$ZodIssue, value: unknown, where: string): Fau
   return new Fault({
     tag: "study",
     where: path.length > 0 ? `${where}: ${path.join(".")}` : where,
-    expected: issue.message.replace(/^Invalid (input|option|string)?:? ?(expected )?/i, "").trim() || "a valid value",
+    expected:
+      issue.message
+        .replace(/^Invalid (input|option|string)?:? ?(expected )?/i, "")
+        .replace(/, received .*$/, "")
+        .trim() || "a valid value",
     got: got === undefined ? "nothing" : JSON.stringify(got).slice(0, 80),
     advice: "correct this key in the study",
   });

@@ -19,6 +19,7 @@ export async function jetsResult(workspace: Workspace, open: OpenStudy, grid: st
   const stages = await fieldStages(workspace, open, grid, { quantity: "u", inBand: true }, job);
   const { record, reduction, background } = stages;
   requireEnough(record.cube.dates, record.cube.rows);
+  requireBand(study.band.filter);
   const sectors = cutSectors(record.axes.longitude.values, study.jets.sectorDegrees);
   const dates = thinnedDates(record.cube.dates, sectorDates);
   const parts = await job.step("Looking at longitude sectors", dates.length, () =>
@@ -50,6 +51,17 @@ export async function jetsResult(workspace: Workspace, open: OpenStudy, grid: st
     job,
   );
   return { key: await jetsKey(workspace, open, grid, job), ...result };
+}
+
+function requireBand(filter: OpenStudy["study"]["band"]["filter"]): void {
+  if (filter !== "none") return;
+  throw new Fault({
+    tag: "band",
+    where: "jets",
+    expected: "a band to look for jets in",
+    got: 'the filter "none"',
+    advice: "choose a filter; leave the long side open to keep standing jets",
+  });
 }
 
 /** Names the record and every setting that jets depend on. */

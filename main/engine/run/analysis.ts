@@ -1,4 +1,5 @@
 import type { OpenStudy } from "../../../core/contract/engine";
+import { Fault } from "../../../core/model/errors";
 import type { Profile, SpectrumResult, SuppliedVelocityReport } from "../../../core/model/results";
 import type { ScalesResult } from "../../../core/model/scales-result";
 import { quantities } from "../../../core/ocean/quantities/index";
@@ -75,7 +76,7 @@ export async function analyse(workspace: Workspace, open: OpenStudy, job: Job): 
     scales: await scalesResult(workspace, { open, grid }, job),
     errors: await workspace.errors(open, grid, job),
     supplied: await suppliedVelocity(workspace, open, grid, job),
-    spectrum: hasBand ? await spectrumResult(workspace, open, grid, "u", job) : null,
+    spectrum: await spectrumOrNull(workspace, open, grid, job),
   };
 }
 
@@ -104,4 +105,19 @@ async function momentsOf(pool: WorkerPool, field: FieldArguments, step: string, 
     ),
   );
   return addMoments(blocks);
+}
+
+/** Spectrum of u by period; null where the record has too few dates for one. */
+async function spectrumOrNull(
+  workspace: Workspace,
+  open: OpenStudy,
+  grid: string,
+  job: Job,
+): Promise<SpectrumResult | null> {
+  try {
+    return await spectrumResult(workspace, open, grid, "u", job);
+  } catch (error) {
+    if (error instanceof Fault && error.tag === "period") return null;
+    throw error;
+  }
 }

@@ -12,12 +12,15 @@ export function jetsMethods({ jets, eddyTest }: JetsAnalysis, study: Study): str
     `Extent and tilt come from longitude sectors of about ${sectorDegrees}°. Drift is the Theil–Sen slope with limits for the effective sample size.`;
   if (!eddyTest) return [found, ""];
   const { population: eddies } = eddyTest;
+  const tests = eddyTest.verdicts.filter(({ leads }) => leads).length;
   const held = eddyTest.verdicts.filter(({ verdict }) => verdict === "held").length;
   const tested =
     `Each jet was held against ${eddyTest.oceans} random oceans of passing Gaussian eddies (seed ${eddyTest.seed}) sampled on the same dates and taken through ` +
     `the same background, band and search: median amplitude ${(100 * eddies.medianAmplitudeMetres).toFixed(1)} cm, radius ${(eddies.medianRadiusMetres / 1000).toFixed(0)} km, ` +
     `${eddies.densityPerMillionKm2.toFixed(2)} eddies per million km², lifetime ${eddies.lifetimeDays.toFixed(0)} days, ${(100 * eddies.speedMetresPerSecond).toFixed(1)} cm s⁻¹ eastward, estimated from the maps unless set by hand. ` +
     `p is the share of oceans with a jet of the same direction within ${eddyTest.halfSpacingDegrees.toFixed(2)}° that scores as high (mean speed times the root of the share of dates), ` +
-    `corrected over jets by Benjamini & Hochberg (1995) at ${100 * eddyTest.level} %: ${held} of ${eddyTest.verdicts.length} jets are held, the others are not told apart from eddies.`;
+    `corrected by Benjamini & Hochberg (1995) at ${100 * eddyTest.level} % over the ${tests} jets that no stronger one of their direction stands beside; ` +
+    `the others are judged by the same threshold. ${held} of ${eddyTest.verdicts.length} jets are held${held < eddyTest.verdicts.length ? "; what is not held is not told apart from eddies" : ""}. ` +
+    "The neighbourhood is half the spacing of jets of one direction, the record's own or the oceans', whichever is wider.";
   return [found, "", tested, ""];
 }

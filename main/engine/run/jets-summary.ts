@@ -19,7 +19,8 @@ export function jetsSummary({ jets, eddyTest, missing }: JetsAnalysis): object {
       ? {
           eddyTest: {
             held: eddyTest.verdicts.filter(({ verdict }) => verdict === "held").length,
-            tested: eddyTest.verdicts.length,
+            jets: eddyTest.verdicts.length,
+            tests: eddyTest.verdicts.filter(({ leads }) => leads).length,
             oceans: eddyTest.oceans,
             seed: eddyTest.seed,
             level: eddyTest.level,

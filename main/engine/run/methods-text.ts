@@ -1,3 +1,4 @@
+import { boxText } from "../../../core/figure/record-text";
 import { formatDay } from "../../../core/model/calendar";
 import { crossingDays } from "../../../core/study/band";
 import { bandWords } from "../../../core/study/band-words";
@@ -37,7 +38,7 @@ export function methodsText(analysis: Analysis): string {
     "",
     "## References",
     "",
-    ...references(study).map((entry) => `- ${entry}`),
+    ...references(study, analysis.jets.eddyTest !== null).map((entry) => `- ${entry}`),
     "",
     `Made with Strake ${version}.`,
     "",
@@ -55,10 +56,9 @@ function dataText({ loaded, stages, grid }: Analysis): string {
     ellipsoid: "the ellipsoid",
     unknown: "an unstated surface",
   };
-  const span = (values: Float64Array) => `${tidy(values[0])} to ${tidy(values[values.length - 1])}`;
   return (
     `Sea-surface height above ${surface[height.reference]} (variable ${height.name} of grid ${grid}, ${files.length} ${files.length === 1 ? "file" : "files"}) ` +
-    `on ${cube.rows} latitudes (${span(axes.latitude.values)}° N) and ${cube.columns} longitudes (${span(axes.longitude.values)}° E), ` +
+    `on ${cube.rows} latitudes and ${cube.columns} longitudes (cell centres ${boxText(axes)}), ` +
     `${cube.dates} dates from ${formatDay(time.calendar, time.values[0])} to ${formatDay(time.calendar, time.values[cube.dates - 1])}` +
     `${cube.dates > 1 ? ` every ${tidy(time.step)} days` : ""}, ${dated} of them with data.`
   );
@@ -156,9 +156,10 @@ function bandText({ band }: Study, { stages }: Analysis): string {
   );
 }
 
-function references({ geostrophy, space, band }: Study): string[] {
+function references({ geostrophy, space, band }: Study, isTested: boolean): string[] {
   const hasLanczos = band.filter === "lanczos" || space.zonal !== null || space.meridional !== null;
   return [
+    ...(isTested ? ["Benjamini, Y., and Hochberg, Y. (1995). J. R. Stat. Soc. B 57, 289–300."] : []),
     "Bretherton, C. S., et al. (1999). J. Climate 12, 1990–2009.",
     ...(space.removeSurface ? ["Cleveland, W. S., and Devlin, S. J. (1988). J. Am. Stat. Assoc. 83, 596–610."] : []),
     ...(hasLanczos ? ["Duchon, C. E. (1979). J. Appl. Meteor. 18, 1016–1022."] : []),

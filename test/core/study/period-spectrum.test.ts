@@ -63,3 +63,12 @@ test("cells without a stretch of eight samples give no spectrum rather than an i
   expect(result.frequency.length).toBe(0);
   expect(result.segments).toBe(0);
 });
+
+test("the longest stretch gives its segment wherever it lies", () => {
+  const days = Float64Array.from({ length: 158 }, (_, t) => 7 * t);
+  const gappy = waves(days).map((value, i) => (i % 158 >= 70 && i % 158 < 78 ? Number.NaN : value));
+  const result = regionSpectrum(u, gappy, weights, 7, backgroundBasis(days, none, 365.2425));
+  expect(result.segmentDays).toBe(80 * 7);
+  expect(result.segments).toBe(1);
+  expect(result.density.every(Number.isFinite)).toBe(true);
+});
