@@ -1,7 +1,7 @@
 import type { Axis, TimeAxis } from "../../core/model/axis";
 import { evenTolerance } from "../../core/model/axis";
 import { Fault } from "../../core/model/errors";
-import type { HeightReference } from "../../core/model/source";
+import type { GridFileReport } from "../../core/model/source";
 import { textAttribute } from "./attributes";
 import { fileFault } from "./faults";
 import type { GridFileContents, GridFilePlan, ReadChoices } from "./grid-file";
@@ -14,15 +14,7 @@ import { recognise } from "./recognise";
 /** Many files joined in time, as one grid. Plain data: crosses thread borders; holds no open file. */
 export interface GridIndex {
   readonly id: string;
-  readonly height: {
-    readonly name: string;
-    readonly standardName: string;
-    readonly longName: string;
-    readonly fileUnits: string;
-    readonly foundBy: string;
-    readonly reference: HeightReference;
-    readonly storedAs: string;
-  };
+  readonly height: GridFileReport["height"];
   /** Ascending, whatever the files' order; so are all planes read through the index. */
   readonly latitude: Axis;
   readonly longitude: Axis;
