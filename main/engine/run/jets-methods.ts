@@ -17,7 +17,7 @@ export function jetsMethods({ jets, eddyTest }: JetsAnalysis, study: Study): str
   const tested =
     `Each jet was held against ${eddyTest.oceans} random oceans of passing Gaussian eddies (seed ${eddyTest.seed}) sampled on the same dates and taken through ` +
     `the same background, band and search: median amplitude ${(100 * eddies.medianAmplitudeMetres).toFixed(1)} cm, radius ${(eddies.medianRadiusMetres / 1000).toFixed(0)} km, ` +
-    `${eddies.densityPerMillionKm2.toFixed(2)} eddies per million km², lifetime ${eddies.lifetimeDays.toFixed(0)} days, ${(100 * eddies.speedMetresPerSecond).toFixed(1)} cm s⁻¹ eastward, estimated from the maps unless set by hand. ` +
+    `${eddies.densityPerMillionKm2.toFixed(2)} eddies per million km², lifetime ${eddies.lifetimeDays.toFixed(0)} days, moving ${Math.abs(100 * eddies.speedMetresPerSecond).toFixed(1)} cm s⁻¹ ${eddies.speedMetresPerSecond < 0 ? "westward" : "eastward"}, estimated from the maps unless set by hand. ` +
     `p is the share of oceans with a jet of the same direction within ${eddyTest.halfSpacingDegrees.toFixed(2)}° that scores as high (mean speed times the root of the share of dates), ` +
     `corrected by Benjamini & Hochberg (1995) at ${100 * eddyTest.level} % over the ${tests} jets that no stronger one of their direction stands beside; ` +
     `the others are judged by the same threshold. ${held} of ${eddyTest.verdicts.length} jets are held${held < eddyTest.verdicts.length ? "; what is not held is not told apart from eddies" : ""}. ` +
