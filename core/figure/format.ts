@@ -78,6 +78,12 @@ function joinedRange(first: string, second: string): string {
   return `${first}–${second}`;
 }
 
+/** A number with its noun, in the singular where the number reads "1": "1 day", "0.5 days". A text stands as it is. */
+export function counted(count: number | string, one: string, many = `${one}s`): string {
+  const text = typeof count === "string" ? count : formatCount(count);
+  return `${text} ${text === "1" ? one : many}`;
+}
+
 /** Whole numbers with a no-break space between thousands: "41 312". */
 export function formatCount(count: number): string {
   return Math.round(count)

@@ -36,6 +36,26 @@ export function linearTicks(from: number, to: number, most: number): Tick[] {
   return multiplesWithin(from, to, step).map((value) => ({ value, label: formatNumber(value, digits) }));
 }
 
+/**
+ * The shortest lists that still tell a scale which holds zero, the most telling first: a round value on both sides of zero,
+ * zero and a round value, then a round value alone; the values from the widest down over two decades.
+ */
+export function fewestTicks(from: number, to: number): Tick[][] {
+  if (!(to > 0) || !(from <= 0)) return [];
+  const decade = 10 ** Math.floor(Math.log10(to));
+  const round = [10, 1, 0.1].flatMap((tenth) => [5, 2, 1].map((step) => step * tenth * decade));
+  const values = round.filter((value) => value <= to * (1 + 1e-9));
+  const listOf = (value: number, ...others: readonly number[]): Tick[] => {
+    const digits = decimalsForStep(value);
+    return [...others, value].map((each) => ({ value: each, label: each === 0 ? "0" : formatNumber(each, digits) }));
+  };
+  return [
+    ...values.filter((value) => -value >= from * (1 + 1e-9)).map((value) => listOf(value, -value)),
+    ...values.map((value) => listOf(value, 0)),
+    ...values.map((value) => listOf(value)),
+  ];
+}
+
 function degreeStep(span: number, most: number): number {
   const least = Math.abs(span) / Math.max(1, most);
   return degreeSteps.find((step) => step >= least * (1 - 1e-9)) ?? 180;

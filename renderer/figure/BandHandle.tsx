@@ -1,4 +1,5 @@
 import { type KeyboardEvent, type PointerEvent, useRef } from "react";
+import { counted } from "../../core/figure/format";
 import type { PanelFrame } from "../../core/figure/scene";
 import { type BandEdge, stepPeriod } from "../state/band-edges";
 
@@ -69,7 +70,7 @@ export function BandHandle(props: BandHandleProps) {
       aria-valuemin={range[0]}
       aria-valuemax={range[1]}
       aria-valuenow={days}
-      aria-valuetext={isOpen ? "open" : `${days} days`}
+      aria-valuetext={isOpen ? "open" : counted(days, "day")}
       onPointerDown={onPointerDown}
       onPointerMove={onPointerMove}
       onPointerUp={release}

@@ -71,7 +71,7 @@ export function Overlay({ scene, latitude, day, readout, onPoint, onHover, child
             onPointerLeave={onLeave}
           />
         ))}
-        <CursorLines panels={scene.panels} latitude={latitude} day={day} />
+        <CursorLines scene={scene} latitude={latitude} day={day} />
         {children}
       </svg>
       {hover && shown ? <HoverBox x={hover.x} y={hover.y} bounds={scene} {...shown} /> : null}

@@ -1,4 +1,5 @@
 import type { Engine, LatitudesResult, OpenStudy, RecordOverview, SpectrumResult } from "../../core/contract/engine";
+import { counted } from "../../core/figure/format";
 import type { BenchStore } from "./bench-state";
 import { recordKey } from "./edit-study";
 import { latestWins } from "./latest-wins";
@@ -54,7 +55,7 @@ export function fields(store: BenchStore, engine: Engine, fail: (error: unknown)
     run: (request, signal) => engine.spectrum(request, { signal }),
     deliver: (result) => {
       const isWhole = result.segments > 0;
-      const noSpectrum = `No spectrum: gaps leave no ${Math.round(result.segmentDays)} days in a row.`;
+      const noSpectrum = `No spectrum: gaps leave no ${counted(result.segmentDays, "day")} in a row.`;
       store.set({ spectrum: isWhole ? result : null, noSpectrum: isWhole ? "" : noSpectrum });
     },
     fail: (error) => {

@@ -1,5 +1,5 @@
 import type { RecordOverview } from "../../core/contract/engine";
-import { decimalsForStep, formatCount, formatNumber } from "../../core/figure/format";
+import { counted, decimalsForStep, formatNumber } from "../../core/figure/format";
 import { boxText, gridText } from "../../core/figure/record-text";
 import { formatDate } from "../../core/figure/time-ticks";
 import type { Study } from "../../core/study/schema";
@@ -10,7 +10,7 @@ type RecordAxes = Pick<RecordOverview, "latitude" | "longitude" | "time">;
 export function recordText(record: RecordAxes): string {
   const { time } = record;
   const days = Math.round(time.values.length * Math.abs(time.step || 1));
-  return `${boxText(record)} · ${formatCount(days)} ${days === 1 ? "day" : "days"}`;
+  return `${boxText(record)} · ${counted(days, "day")}`;
 }
 
 /** A grid's label, with its spacing and sampling once they are known: "Grid A · 0.125° · 3 d". */
@@ -19,10 +19,17 @@ export function gridTitle(study: Study, id: string, record: RecordAxes | null): 
   return record ? gridText(name, record) : name;
 }
 
-/** First and last date of a time axis and how many there are. */
+/** First and last date of a time axis; one date stands alone. */
 export function periodText(time: RecordOverview["time"]): string {
   const { values, calendar } = time;
+  if (values.length === 1) return formatDate(calendar, values[0]);
   return `${formatDate(calendar, values[0])} to ${formatDate(calendar, values[values.length - 1])}`;
+}
+
+/** How many dates and how far apart: "300 dates, every 3 days", "30 dates, daily", "one date". */
+export function datesText(time: RecordOverview["time"]): string {
+  const count = time.values.length;
+  return count === 1 ? samplingText(time) : `${counted(count, "date")}, ${samplingText(time)}`;
 }
 
 /** "every 3 days", "daily", "one date". */

@@ -135,6 +135,13 @@ describe("jets in words", () => {
     expect(tooFewOceansText({ ...madeTest("one", verdicts), oceans: 58 })).toMatch(/with 59 or more/);
     expect(tooFewOceansText({ ...madeTest("one", verdicts), oceans: 59 })).toBe("");
   });
+
+  test("only the leading jets count as tests where too few oceans are told of", () => {
+    const verdicts = [1, 2, 3, 4, 5].map((jet) => ({ ...madeVerdict(jet, 0.01), leads: jet < 3 }));
+    // Two tests at 5 %: 1 / 40 is the largest chance with which a lone jet is held.
+    expect(tooFewOceansText({ ...madeTest("one", verdicts), oceans: 38 })).toMatch(/with 39 or more.*among 2 leading/);
+    expect(tooFewOceansText({ ...madeTest("one", verdicts), oceans: 39 })).toBe("");
+  });
 });
 
 describe("numbers of the eddies", () => {

@@ -1,6 +1,7 @@
 import type { Theme } from "../colour/theme";
 import { linePath, pathMark, rectanglePath } from "../marks";
 import { pixelX } from "../panel";
+import { usualSpacing } from "../resample";
 import type { Mark, PanelFrame } from "../scene";
 import { dataWidth, frameMark, groundMark } from "./axis-marks";
 import { bridgedGaps } from "./bridged-gaps";
@@ -31,7 +32,7 @@ export function bridgedDates(input: LatitudesInput): Uint8Array {
 }
 
 /**
- * Coverage by date as a grey area; filter ends shaded; dates without data in red-brown, low where the gap is bridged; the
+ * Coverage by date as a grey area; filter ends shaded; dates without data and holes between dates in red-brown, low where the gap is bridged; the
  * map's date in amber.
  */
 export function daysMarks(input: LatitudesInput, panel: PanelFrame, theme: Theme): Mark[] {
@@ -47,10 +48,21 @@ export function daysMarks(input: LatitudesInput, panel: PanelFrame, theme: Theme
         return rectanglePath(x, y + (1 - share) * height, width, share * height);
       })
       .join("");
+  const holes = timeHoles(time.values)
+    .map(([start, end]) => {
+      const [left, right] = [pixelX(panel, start), pixelX(panel, end)].sort((a, b) => a - b);
+      const width = Math.max(leastGapPixels, right - left);
+      return rectanglePath(Math.min(left, panel.x + panel.width - width), y, width, height);
+    })
+    .join("");
   const x = pixelX(panel, time.values[dateIndex]);
   return [
     groundMark(panel, theme),
-    pathMark("days-data", coveragePath(panel, coverage), { fill: theme.data, clip: panel.id }),
+    pathMark(
+      "days-data",
+      time.even ? coveragePath(panel, coverage) : unevenCoveragePath(panel, time.values, coverage),
+      { fill: theme.data, clip: panel.id },
+    ),
     pathMark(
       "days-weakened",
       rectangles((date) => filterEnd[date] === 1, 0),
@@ -61,6 +73,7 @@ export function daysMarks(input: LatitudesInput, panel: PanelFrame, theme: Theme
       rectangles((date) => hasData[date] === 0 && bridged[date] === 0, leastGapPixels),
       { fill: theme.gap, clip: panel.id },
     ),
+    ...(holes === "" ? [] : [pathMark("days-holes", holes, { fill: theme.gap, clip: panel.id })]),
     pathMark(
       "days-bridged",
       rectangles((date) => bridged[date] === 1, leastGapPixels, bridgedShare),
@@ -69,6 +82,21 @@ export function daysMarks(input: LatitudesInput, panel: PanelFrame, theme: Theme
     frameMark(panel, theme),
     pathMark("days-date", linePath(x, y - 4, x, y + height + 4), { stroke: theme.amber, strokeWidth: dataWidth + 0.4 }),
   ];
+}
+
+/** A longer way between two dates is a hole, as in the picture above. */
+const mostSteps = 1.5;
+
+/** Stretches without a date, half a usual step from the dates beside them; in the axis's own units and order. */
+function timeHoles(times: Float64Array): [start: number, end: number][] {
+  const usual = usualSpacing(times);
+  const half = (Math.sign(times[times.length - 1] - times[0]) * usual) / 2;
+  const holes: [number, number][] = [];
+  for (let date = 1; date < times.length; date++) {
+    if (Math.abs(times[date] - times[date - 1]) <= mostSteps * usual) continue;
+    holes.push([times[date - 1] + half, times[date] - half]);
+  }
+  return holes;
 }
 
 /** Left and right pixels of every unbroken run of dates that pass the test. */
@@ -90,6 +118,19 @@ function dateRuns(panel: PanelFrame, input: LatitudesInput, test: (date: number)
     }
   }
   return runs;
+}
+
+/** Stepped area under the coverage of dates at uneven distances: each reaches half way to its neighbours. */
+function unevenCoveragePath(panel: PanelFrame, times: Float64Array, coverage: Float64Array): string {
+  const bottom = panel.y + panel.height;
+  const hundredth = (pixel: number) => Math.round(100 * pixel) / 100;
+  let d = `M${panel.x} ${bottom}`;
+  for (const [date, share] of coverage.entries()) {
+    const isLast = date === times.length - 1;
+    const right = isLast ? panel.x + panel.width : pixelX(panel, (times[date] + times[date + 1]) / 2);
+    d += `V${hundredth(bottom - panel.height * (share || 0))}H${hundredth(right)}`;
+  }
+  return `${d}V${bottom}Z`;
 }
 
 /** Stepped area under the coverage: a step a date, or a step a pixel (the mean of its dates) where dates are finer. */

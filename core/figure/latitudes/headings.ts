@@ -1,6 +1,6 @@
 import type { Theme } from "../colour/theme";
 import { displayUnits } from "../display-units";
-import { formatLongitudeRange, formatSignificant } from "../format";
+import { counted, formatLongitudeRange, formatSignificant } from "../format";
 import { textMark } from "../marks";
 import { cellEdges } from "../resample";
 import type { Mark } from "../scene";
@@ -17,8 +17,8 @@ function listed(...parts: readonly string[]): string {
 export function periodsText(input: LatitudesInput): string {
   if (!isFiltered(input)) return "all periods";
   const { shortestDays, longestDays } = input.band;
-  if (longestDays === null) return `periods over ${formatSignificant(shortestDays ?? 0, 4)} days`;
-  if (shortestDays === null) return `periods under ${formatSignificant(longestDays, 4)} days`;
+  if (longestDays === null) return `periods over ${counted(formatSignificant(shortestDays ?? 0, 4), "day")}`;
+  if (shortestDays === null) return `periods under ${counted(formatSignificant(longestDays, 4), "day")}`;
   return `periods ${formatSignificant(shortestDays, 4)}–${formatSignificant(longestDays, 4)} days`;
 }
 
@@ -39,7 +39,6 @@ export function rowHeadingMarks(input: LatitudesInput, layout: LatitudesLayout, 
   const averaged = formatLongitudeRange(west, east);
   const { map, zonalMean, latitudeTime, panelGap } = layout;
   const { heading, small } = layout.sizes;
-  const keyIsBeside = layout.pictureKey.x > latitudeTime.x;
   const dateIsAbove = textWidth(mapHeading(input), heading, 700) <= map.width;
   const columns = [
     {
@@ -65,7 +64,7 @@ export function rowHeadingMarks(input: LatitudesInput, layout: LatitudesLayout, 
     {
       id: "latitude-time",
       x: latitudeTime.x,
-      width: keyIsBeside ? layout.pictureKey.x - latitudeTime.x - heading : latitudeTime.width,
+      width: layout.keysAreBeside ? layout.pictureKey.x - latitudeTime.x - heading : latitudeTime.width,
       heading: [pictureHeading],
       below: [
         listed(units, `averaged over ${averaged}`, periodsText(input)),

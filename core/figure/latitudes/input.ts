@@ -17,7 +17,7 @@ export interface LatitudesInput {
     /** Signed quantities get the diverging colour map. */
     readonly signed: boolean;
   };
-  /** null: that side of the band is open. */
+  /** The band of the result. null: that side of it is open. */
   readonly band: {
     readonly shortestDays: number | null;
     readonly longestDays: number | null;
@@ -27,6 +27,8 @@ export interface LatitudesInput {
     /** Gaps up to this long are bridged, and drawn as such. Left out: none is. */
     readonly bridgeDays?: number;
   };
+  /** Edges drawn on the period panel where they run ahead of the result. Left out: those of the result's band. */
+  readonly heldBand?: BandEdges;
   /** Jets drawn over the latitude-time picture. Empty: none, but their labels' room is kept; left out: no room either. */
   readonly jets?: readonly JetLine[];
   /** Id of the jet that is lit in every panel. */
@@ -39,6 +41,13 @@ export interface LatitudesInput {
   readonly grid: string;
   /** Date of the map, "24 May 2032". */
   readonly date: string;
+}
+
+/** Edges of a pass band; null: that side is open. There are none where the filter is "none". */
+export interface BandEdges {
+  readonly shortestDays: number | null;
+  readonly longestDays: number | null;
+  readonly filter: string;
 }
 
 /** Axes of the record and what each date holds; latitudes and longitudes ascend. */
@@ -84,6 +93,11 @@ export interface FigureSize {
   readonly textSize?: number;
   /** "row": the three panels alone, without the period spectrum and the days with data. */
   readonly arrangement?: "full" | "row";
+}
+
+/** The edges that the period panel shows. */
+export function shownBand({ band, heldBand }: LatitudesInput): BandEdges {
+  return heldBand ?? band;
 }
 
 /** Whether values shown went through the study's band. */

@@ -27,6 +27,8 @@ export interface LatitudesLayout {
   /** The bars of the colour keys of map and latitude-time picture; their numbers stand above them. */
   readonly mapKey: Box;
   readonly pictureKey: Box;
+  /** The keys stand right of the headings, not under them. */
+  readonly keysAreBeside: boolean;
   readonly map: Box;
   readonly zonalMean: Box;
   readonly latitudeTime: Box;
@@ -115,15 +117,12 @@ export function latitudesLayout(size: FigureSize, needs: LayoutNeeds): Latitudes
   const map = { x: left, y: top, width: mapWidth, height };
   const zonalMean = { x: map.x + mapWidth + panelGap, y: top, width: zonalWidth, height };
   const latitudeTime = { x: zonalMean.x + zonalWidth + panelGap, y: top, width: timeWidth, height };
-  const keyOver = (panel: Box): Box =>
-    isBeside
-      ? {
-          x: panel.x + panel.width - keyWidth,
-          y: top - Math.round(0.65 * small) - keyHeight,
-          width: keyWidth,
-          height: keyHeight,
-        }
-      : { x: panel.x, y: top - Math.round(0.5 * small) - keyHeight, width: panel.width, height: keyHeight };
+  const keyOver = (panel: Box): Box => ({
+    x: panel.x + panel.width - keyWidth,
+    y: top - Math.round((isBeside ? 0.65 : 0.5) * small) - keyHeight,
+    width: keyWidth,
+    height: keyHeight,
+  });
   const shared = {
     sizes,
     margin,
@@ -132,6 +131,7 @@ export function latitudesLayout(size: FigureSize, needs: LayoutNeeds): Latitudes
     subheadingBase,
     mapKey: keyOver(map),
     pictureKey: keyOver(latitudeTime),
+    keysAreBeside: isBeside,
     map,
     zonalMean,
     latitudeTime,

@@ -1,5 +1,5 @@
 import type { Theme } from "../colour/theme";
-import { formatCount, formatNumber } from "../format";
+import { counted, formatCount, formatNumber } from "../format";
 import { linePath, pathMark, rectanglePath, textMark } from "../marks";
 import type { Mark, PanelFrame } from "../scene";
 import { fittingText, textWidth } from "../text-width";
@@ -91,14 +91,15 @@ export function remarkTexts(input: LatitudesInput): string[] {
 
 function dataCountText({ record }: LatitudesInput): string {
   const held = record.hasData.reduce((sum, has) => sum + (has ? 1 : 0), 0);
-  return `${formatCount(held)} of ${formatCount(record.hasData.length)} dates have data`;
+  const all = counted(record.hasData.length, "date");
+  return `${formatCount(held)} of ${all} ${record.hasData.length === 1 ? "has" : "have"} data`;
 }
 
 /** What the filter loses; empty where there was none. */
 function endsText(input: LatitudesInput): string {
   if (!isFiltered(input)) return "";
   const lost = formatNumber(input.result.response.daysLostEachEnd, 0);
-  return `the ${filterName(input.band)} weakens ${lost} days at each end`;
+  return `the ${filterName(input.band)} weakens ${counted(lost, "day")} at each end`;
 }
 
 /** Swatches with their words, left to right; those that do not fit are left out. */

@@ -7,7 +7,7 @@ import type { Mark, PanelFrame } from "../scene";
 import { fittingText, textWidth } from "../text-width";
 import { linearTicks, periodTicks, type Tick } from "../ticks";
 import { bottomTickMarks, dataWidth, frameMark, groundMark, leftTickMarks } from "./axis-marks";
-import type { LatitudesInput } from "./input";
+import { type LatitudesInput, shownBand } from "./input";
 import type { Box, LatitudesLayout, TypeSizes } from "./layout";
 
 const headroom = 1.14;
@@ -35,7 +35,9 @@ function variances({ spectrum }: LatitudesInput): number[] {
 }
 
 /** Periods that the spectrum resolves (or the record, without one), widened to show both band edges. */
-function periodRange({ spectrum, record, band }: LatitudesInput): [longest: number, shortest: number] {
+function periodRange(input: LatitudesInput): [longest: number, shortest: number] {
+  const { spectrum, record } = input;
+  const band = shownBand(input);
   const frequencies = spectrum?.frequency.filter((frequency) => frequency > 0) ?? new Float64Array(0);
   const times = record.time.values;
   const step = Math.abs(record.time.step) || 1;
@@ -60,7 +62,7 @@ export function varianceTicks(panel: PanelFrame, input: LatitudesInput): Tick[] 
   }));
 }
 
-/** Variance by period in ink; the pass band tinted, its edges and the filter's response in amber. */
+/** Variance by period in ink; the held pass band tinted, its edges in amber, as is the response of the result's filter. */
 export function spectrumMarks(
   input: LatitudesInput,
   layout: LatitudesLayout,
@@ -71,7 +73,7 @@ export function spectrumMarks(
   const { from, to } = panel.horizontal;
   const leastGap = (6.2 * layout.sizes.small * Math.log(from / to)) / panel.width;
   const within = [0, panel.x + panel.width + layout.panelGap / 2] as const;
-  const hasBand = input.band.filter !== "none";
+  const hasBand = shownBand(input).filter !== "none";
   const note = input.spectrum ? "" : (input.spectrumNote ?? "");
   const { frequency = new Float64Array(0) } = input.spectrum ?? {};
   const curve = polylinePath(
@@ -80,7 +82,8 @@ export function spectrumMarks(
   );
   return [
     groundMark(panel, theme),
-    ...(hasBand ? bandMarks(input, panel, theme) : []),
+    ...(hasBand ? [bandMark(input, panel, theme)] : []),
+    ...(input.band.filter === "none" ? [] : [responseMark(input, panel, theme)]),
     pathMark("spectrum-line", curve, { stroke: theme.ink, strokeWidth: dataWidth, clip: panel.id }),
     ...(note === "" ? [] : [noteMark(note, input, panel, theme, layout.sizes)]),
     frameMark(panel, theme),
@@ -92,7 +95,7 @@ export function spectrumMarks(
 
 /** Why the curve is missing, where it would be: in the widest stretch that the band's edges leave free. */
 function noteMark(note: string, input: LatitudesInput, panel: PanelFrame, theme: Theme, { small }: TypeSizes): Mark {
-  const edges = input.band.filter === "none" ? [] : edgePlaces(input, panel);
+  const edges = shownBand(input).filter === "none" ? [] : edgePlaces(input, panel);
   const places = [panel.x, ...edges, panel.x + panel.width];
   const stretches = places.slice(1).map((right, index) => ({ left: places[index], width: right - places[index] }));
   const { left, width } = stretches.reduce((widest, each) => (each.width > widest.width ? each : widest));
@@ -102,36 +105,38 @@ function noteMark(note: string, input: LatitudesInput, panel: PanelFrame, theme:
 }
 
 /** Pixels of the band's edges; an open side lies on the frame. */
-function edgePlaces({ band }: LatitudesInput, panel: PanelFrame): [left: number, right: number] {
+function edgePlaces(input: LatitudesInput, panel: PanelFrame): [left: number, right: number] {
   const { from, to } = panel.horizontal;
+  const band = shownBand(input);
   return [pixelX(panel, band.longestDays ?? from), pixelX(panel, band.shortestDays ?? to)];
 }
 
-function bandMarks(input: LatitudesInput, panel: PanelFrame, theme: Theme): Mark[] {
+function bandMark(input: LatitudesInput, panel: PanelFrame, theme: Theme): Mark {
   const [left, right] = edgePlaces(input, panel);
+  return pathMark("spectrum-band", rectanglePath(left, panel.y, right - left, panel.height), {
+    fill: theme.amberTint,
+    clip: panel.id,
+  });
+}
+
+function responseMark(input: LatitudesInput, panel: PanelFrame, theme: Theme): Mark {
   const { frequency, amplitude } = input.result.response;
   const passed = panel.vertical.from / headroom;
   const response = polylinePath(
     Array.from(frequency, (value) => (value > 0 ? pixelX(panel, 1 / value) : Number.NaN)),
     Array.from(amplitude, (value) => pixelY(panel, value * passed)),
   );
-  return [
-    pathMark("spectrum-band", rectanglePath(left, panel.y, right - left, panel.height), {
-      fill: theme.amberTint,
-      clip: panel.id,
-    }),
-    pathMark("spectrum-response", response, {
-      stroke: theme.amber,
-      strokeWidth: dataWidth,
-      dash: [1.5, 3],
-      clip: panel.id,
-    }),
-  ];
+  return pathMark("spectrum-response", response, {
+    stroke: theme.amber,
+    strokeWidth: dataWidth,
+    dash: [1.5, 3],
+    clip: panel.id,
+  });
 }
 
 /** Lines at both edges of the band and their periods above the frame, outside the band; joined where they would meet. */
 function edgeMarks(input: LatitudesInput, panel: PanelFrame, base: number, theme: Theme, sizes: TypeSizes): Mark[] {
-  const { longestDays, shortestDays } = input.band;
+  const { longestDays, shortestDays } = shownBand(input);
   const [left, right] = edgePlaces(input, panel);
   const bottom = panel.y + panel.height;
   const lines = linePath(left, panel.y - 4, left, bottom) + linePath(right, panel.y - 4, right, bottom);

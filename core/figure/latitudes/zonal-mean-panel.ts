@@ -3,8 +3,17 @@ import { displayUnits } from "../display-units";
 import { bandPath, linePath, pathMark, polylinePath } from "../marks";
 import { pixelX, pixelY } from "../panel";
 import type { Mark, PanelFrame } from "../scene";
-import { linearTicks } from "../ticks";
-import { bottomTickMarks, dataWidth, frameMark, groundMark, hairWidth, roomiestTicks } from "./axis-marks";
+import { textWidth } from "../text-width";
+import { fewestTicks, linearTicks, type Tick } from "../ticks";
+import {
+  bottomTickMarks,
+  dataWidth,
+  frameMark,
+  groundMark,
+  hairWidth,
+  labelsKeepApart,
+  roomiestTicks,
+} from "./axis-marks";
 import { errorsWithin95 } from "./doubtful-cells";
 import type { LatitudesInput } from "./input";
 import type { LatitudesLayout } from "./layout";
@@ -101,9 +110,18 @@ function zonalTicks(input: LatitudesInput, layout: LatitudesLayout, panel: Panel
   const { from, to } = panel.horizontal;
   const make = (most: number) =>
     linearTicks(from * scale, to * scale, most).map(({ value, label }) => ({ value: value / scale, label }));
-  // A narrow panel needs its few labels near each other, a wide one looks calmer with them apart.
-  const gap = Math.max(0.6 * layout.sizes.small, 0.1 * panel.width);
-  const ticks = roomiestTicks(panel, make, layout.sizes, gap);
+  const { small } = layout.sizes;
   const within = [panel.x - 6, panel.x + panel.width + 6] as const;
+  const isLabelled = ({ value, label }: Tick) => {
+    const half = textWidth(label, small, 400) / 2;
+    return pixelX(panel, value) - half >= within[0] && pixelX(panel, value) + half <= within[1];
+  };
+  // A narrow panel needs its few labels near each other, a wide one looks calmer with them apart.
+  const roomiest = roomiestTicks(panel, make, layout.sizes, Math.max(0.6 * small, 0.1 * panel.width));
+  const fewer = () =>
+    fewestTicks(from * scale, to * scale)
+      .map((list) => list.map(({ value, label }) => ({ value: value / scale, label })))
+      .find((list) => list.every(isLabelled) && labelsKeepApart(panel, list, small, 0.4 * small));
+  const ticks = roomiest.filter(isLabelled).length > 1 ? roomiest : (fewer() ?? roomiest);
   return bottomTickMarks(panel, ticks, within, theme, layout.sizes);
 }

@@ -1,4 +1,4 @@
-import { formatSignificant } from "../format";
+import { counted, formatSignificant } from "../format";
 
 /** A band in words, "periods 90–540 days"; empty where nothing is filtered. */
 export function bandText(band: {
@@ -8,7 +8,7 @@ export function bandText(band: {
 }): string {
   const { filter, shortestDays, longestDays } = band;
   if (filter === "none" || (shortestDays === null && longestDays === null)) return "";
-  if (longestDays === null) return `periods over ${formatSignificant(shortestDays ?? 0, 4)} days`;
-  if (shortestDays === null) return `periods under ${formatSignificant(longestDays, 4)} days`;
+  if (longestDays === null) return `periods over ${counted(formatSignificant(shortestDays ?? 0, 4), "day")}`;
+  if (shortestDays === null) return `periods under ${counted(formatSignificant(longestDays, 4), "day")}`;
   return `periods ${formatSignificant(shortestDays, 4)}–${formatSignificant(longestDays, 4)} days`;
 }

@@ -1,5 +1,5 @@
 import type { Estimate, PushEstimate, ScalesResult } from "../../model/scales-result";
-import { formatLatitude, formatNumber, formatSignificant } from "../format";
+import { counted, formatLatitude, formatNumber, formatSignificant } from "../format";
 import { estimateText, powerText } from "./estimate-text";
 import { signChangesText } from "./profile-panels";
 import { rhinesSpeedOf, rhinesTitle, rhinesWavelength } from "./rhines";
@@ -92,7 +92,7 @@ function persistenceFact({ latitude, persistence }: ScalesResult): Fact {
   const rows = [...latitude.keys()].filter((row) => longest > 0 && longestDays[row] === longest);
   const head = { id: "persistence", label: "Longest run of one sign" };
   if (rows.length === 0) return { ...head, values: ["unknown"] };
-  const days = `${formatNumber(longest, 0)} days`;
+  const days = counted(formatNumber(longest, 0), "day");
   if (rows.length > 1) {
     const known = share.filter(Number.isFinite).sort();
     return {
@@ -153,7 +153,7 @@ export function waveFacts({ waves, drift, alongLatitude }: ScalesResult): Fact[]
     {
       id: "period",
       label: "Shortest period of waves at rest",
-      values: [waves.shortestPeriodDays > 0 ? `${formatNumber(waves.shortestPeriodDays, 0)} days` : "unknown"],
+      values: [waves.shortestPeriodDays > 0 ? counted(formatNumber(waves.shortestPeriodDays, 0), "day") : "unknown"],
     },
     { id: "mean-flow", label: "Mean flow there", values: [speed(waves.meanFlow)] },
   ];

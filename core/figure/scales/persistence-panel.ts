@@ -51,7 +51,7 @@ export function persistencePanel(cell: Cell, drawing: Drawing): PanelMarks {
 function remarks(isTold: boolean, { input }: Drawing): string[] {
   const { inBand, stepDays } = input.result.persistence;
   const counted = inBand && input.band !== "" ? `u in ${input.band}` : "u";
-  const every = `a map every ${formatSignificant(stepDays, 3)} days`;
+  const every = stepDays === 1 ? "a map every day" : `a map every ${formatSignificant(stepDays, 3)} days`;
   if (isTold) return [`${counted}; ${every}`, counted];
   return [`${meaning}; ${counted}`, meaning, "share of dates with one sign"];
 }

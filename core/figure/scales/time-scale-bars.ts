@@ -1,4 +1,4 @@
-import { formatNumber, formatSignificant } from "../format";
+import { counted, formatNumber, formatSignificant } from "../format";
 import { pathMark, rectanglePath, textMark } from "../marks";
 import type { Mark } from "../scene";
 import { fittingText } from "../text-width";
@@ -16,9 +16,13 @@ export function timeScaleBars(cell: Cell, drawing: Drawing): PanelMarks {
   if (!energy) return missingPanel(cell, heading, missingReason(input.result, "period"), drawing);
   const [weeks, months] = [energy.weeksDays, energy.monthsDays].map((days) => formatSignificant(days, 4));
   const rows = [
-    { id: "weeks", share: energy.weeksShare, texts: [`under ${weeks} days`] },
-    { id: "months", share: energy.monthsShare, texts: [`${weeks} to ${months} days`] },
-    { id: "longer", share: energy.longerShare, texts: [`over ${months} days and the mean`, `over ${months} days`] },
+    { id: "weeks", share: energy.weeksShare, texts: [`under ${counted(weeks, "day")}`] },
+    { id: "months", share: energy.monthsShare, texts: [`${weeks} to ${counted(months, "day")}`] },
+    {
+      id: "longer",
+      share: energy.longerShare,
+      texts: [`over ${counted(months, "day")} and the mean`, `over ${counted(months, "day")}`],
+    },
   ];
   const { small } = sizes;
   const { x, y, width, height } = cell.frame;

@@ -3,7 +3,15 @@ import { quantities } from "../../../core/ocean/quantities/index";
 /** Headings of the quantity menu, in its order, and whom they hold. A quantity named nowhere stands under the last. */
 const headings: Readonly<Record<string, readonly string[]>> = {
   Height: ["height", "height-laplacian"],
-  Currents: ["u", "v", "speed", "u-cyclogeostrophic", "v-cyclogeostrophic", "speed-cyclogeostrophic", "cyclogeostrophic-status"],
+  Currents: [
+    "u",
+    "v",
+    "speed",
+    "u-cyclogeostrophic",
+    "v-cyclogeostrophic",
+    "speed-cyclogeostrophic",
+    "cyclogeostrophic-status",
+  ],
   "Turning and strain": [
     "vorticity",
     "rossby-number",

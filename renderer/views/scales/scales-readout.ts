@@ -1,4 +1,4 @@
-import { formatLatitude, formatLongitude, formatNumber, formatSignificant } from "../../../core/figure/format";
+import { counted, formatLatitude, formatLongitude, formatNumber, formatSignificant } from "../../../core/figure/format";
 import { nearestCell } from "../../../core/figure/resample";
 import { directionText, shareText as percentText } from "../../../core/figure/scales/facts";
 import { formatDate } from "../../../core/figure/time-ticks";
@@ -26,7 +26,7 @@ const readers: Readonly<Record<string, Reader>> = {
     if (!found) return null;
     const value = cellOf(found.density, found.frequency, found.wavenumber, up, across);
     const direction = across < 0 ? "westward" : "eastward";
-    const period = up > 0 ? `${formatSignificant(1 / up, 3)} days` : "standing";
+    const period = up > 0 ? counted(formatSignificant(1 / up, 3), "day") : "standing";
     return { value: shareText(value, found.density), place: `${direction}, ${length(across)}, ${period}` };
   },
   wavelengths: ({ result }, across) => ({ value: spectraText(result, across), place: length(1 / across) }),
@@ -35,12 +35,15 @@ const readers: Readonly<Record<string, Reader>> = {
     if (!period) return null;
     const k = nearestCell(period.frequency, 1 / across);
     const value = period.frequency[k] * period.density[k];
-    return { value: variance(value), place: `${formatSignificant(1 / period.frequency[k], 3)} days` };
+    return { value: variance(value), place: counted(formatSignificant(1 / period.frequency[k], 3), "day") };
   },
   zonality: ({ result }, across) => {
     const { days, zonality } = result.zonality;
     const k = nearestCell(days.map(Math.log), Math.log(across));
-    return { value: formatNumber(zonality[k], 2), place: `averages over ${formatSignificant(days[k], 3)} days` };
+    return {
+      value: formatNumber(zonality[k], 2),
+      place: `averages over ${counted(formatSignificant(days[k], 3), "day")}`,
+    };
   },
   "drift-along": (picture, across, up) =>
     driftText(picture, picture.result.drift.alongLatitude, across, up, (value) => formatLongitude(value, 2)),
@@ -84,7 +87,7 @@ export function scalesReadout(picture: ScalesPicture, panel: string, across: num
 /** "82 % of dates eastward, longest run 450 days". */
 function persistenceText(share: number, sign: number, days: number): string {
   if (!Number.isFinite(share)) return "no values";
-  return `${percentText(share)} of dates ${directionText(sign)}, longest run ${formatNumber(days, 0)} days`;
+  return `${percentText(share)} of dates ${directionText(sign)}, longest run ${counted(formatNumber(days, 0), "day")}`;
 }
 
 function cellOf(plane: Plane, rows: Float64Array, columns: Float64Array, up: number, across: number): number {

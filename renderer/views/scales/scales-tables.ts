@@ -1,4 +1,4 @@
-import { formatLatitude, formatNumber, formatSignificant } from "../../../core/figure/format";
+import { counted, formatLatitude, formatNumber, formatSignificant } from "../../../core/figure/format";
 import { powerText } from "../../../core/figure/scales/estimate-text";
 import { directionText, shareText } from "../../../core/figure/scales/facts";
 import { signChangesText } from "../../../core/figure/scales/profile-panels";
@@ -46,7 +46,7 @@ export function persistenceTable({ latitude, persistence: { byLatitude, inBand }
     rows: rows.map((row) => [
       formatLatitude(latitude[row], 2),
       ...(Number.isFinite(share[row])
-        ? [directionText(sign[row]), shareText(share[row]), `${formatNumber(longestDays[row], 0)} days`]
+        ? [directionText(sign[row]), shareText(share[row]), counted(formatNumber(longestDays[row], 0), "day")]
         : [none, none, none]),
     ]),
   };
@@ -108,7 +108,7 @@ function driftRows({ drift, waves }: ScalesResult): NumberRow[] {
     speed("Rossby waves of the spectra’s peaks at rest", waves.atPeak),
     speed("Rossby waves of the spectra’s peaks in the mean flow", waves.atPeakInFlow),
     speed("Mean flow", waves.meanFlow),
-    plainRow("Shortest period of waves at rest", `${formatNumber(waves.shortestPeriodDays, 0)} days`),
+    plainRow("Shortest period of waves at rest", counted(formatNumber(waves.shortestPeriodDays, 0), "day")),
   ];
 }
 
@@ -138,9 +138,12 @@ function forcingRows({ forcing, energy, plane, lengths }: ScalesResult): NumberR
     ...(plane ? [plainRow("Kinetic energy inside the boundary of waves", share(plane.shareInside))] : []),
     ...(energy
       ? [
-          plainRow(`Kinetic energy under ${formatSignificant(energy.weeksDays, 4)} days`, share(energy.weeksShare)),
           plainRow(
-            `Kinetic energy from ${formatSignificant(energy.weeksDays, 4)} to ${formatSignificant(energy.monthsDays, 4)} days`,
+            `Kinetic energy under ${counted(formatSignificant(energy.weeksDays, 4), "day")}`,
+            share(energy.weeksShare),
+          ),
+          plainRow(
+            `Kinetic energy from ${formatSignificant(energy.weeksDays, 4)} to ${counted(formatSignificant(energy.monthsDays, 4), "day")}`,
             share(energy.monthsShare),
           ),
           plainRow("Kinetic energy of longer periods and the mean", share(energy.longerShare)),

@@ -1,11 +1,11 @@
 import type { RecognisedFile } from "../../../core/contract/engine";
-import { formatCount, formatLatitude, formatLongitude, formatNumber } from "../../../core/figure/format";
+import { counted, formatCount, formatLatitude, formatLongitude, formatNumber } from "../../../core/figure/format";
 import { boxText } from "../../../core/figure/record-text";
 import { formatDate } from "../../../core/figure/time-ticks";
 import type { FileReport, GridFileReport, TrackFileReport } from "../../../core/model/source";
 import { faultSentences } from "../../state/notices";
 import { fileName } from "../../state/paths";
-import { bytesText, periodText, samplingText } from "../../text/record";
+import { bytesText, datesText, periodText } from "../../text/record";
 import { Facts, shortened } from "./Facts";
 
 /** One file: what it was recognised as, or why it was refused. */
@@ -67,7 +67,7 @@ function gridFacts(report: GridFileReport): readonly Fact[] {
     ["Units", `${height.fileUnits || "none given"}, stored as ${height.storedAs}`],
     ["Reference", references[height.reference]],
     ["Region", boxText(report)],
-    ["Period", `${periodText(time)}, ${formatCount(time.values.length)} dates, ${samplingText(time)}`],
+    ["Period", `${periodText(time)}, ${datesText(time)}`],
     ["Time", `${report.timeUnits}, ${time.calendar.replace("_", " ")} calendar`],
     ["Left out on the first date", counts.length > 0 ? counts.join(", ") : "nothing"],
   ];
@@ -78,7 +78,7 @@ function trackFacts(report: TrackFileReport): readonly Fact[] {
   return [
     ["Height", report.height.name],
     ["Units", report.height.fileUnits || "none given"],
-    ["Points", `${formatCount(report.points)} in ${formatCount(report.passes)} passes`],
+    ["Points", `${counted(report.points, "point")} in ${counted(report.passes, "pass", "passes")}`],
     ["Period", `${formatDate(calendar, report.firstDay)} to ${formatDate(calendar, report.lastDay)}`],
     [
       "Region",

@@ -1,5 +1,5 @@
 import type { OpenStudy, SuppliedVelocityReport } from "../../../core/contract/engine";
-import { formatCount, formatLatitudeRange, formatSignificant } from "../../../core/figure/format";
+import { counted, formatCount, formatLatitudeRange, formatSignificant } from "../../../core/figure/format";
 import { useBench } from "../../app/bench-context";
 import { Button } from "../../controls/Button";
 import { withGeostrophy } from "../../state/edit-study";
@@ -40,7 +40,7 @@ export function VelocityReport({ open, report }: VelocityReportProps) {
           ["Northward", report.northward],
           ["Found by", report.foundBy],
           ["Reference", `${references[report.reference]}${matchText(report.matchesHeight)}`],
-          ["Compared", `${formatCount(report.dates)} ${report.dates === 1 ? "date" : "dates"} of the record`],
+          ["Compared", `${counted(report.dates, "date")} of the record`],
           ["Constant in time", `${formatSignificant(100 * agreement.meanShare, 2)} % of the mean square difference`],
           ["Cells only ours has", formatCount(agreement.oursOnly)],
           ["Cells only theirs has", formatCount(agreement.suppliedOnly)],

@@ -1,6 +1,7 @@
 import { describe, expect, test } from "vitest";
 import { displayUnits, withSuperscripts } from "../../../core/figure/display-units";
 import {
+  counted,
   formatCount,
   formatLatitude,
   formatLatitudeRange,
@@ -9,6 +10,17 @@ import {
   formatNumber,
   formatSignificant,
 } from "../../../core/figure/format";
+
+test("a number stands with its noun in the singular for one alone", () => {
+  expect(["0.5", 0, 1, 2, "1.0"].map((count) => counted(count, "day"))).toEqual([
+    "0.5 days",
+    "0 days",
+    "1 day",
+    "2 days",
+    "1.0 days",
+  ]);
+  expect(counted(1, "pass", "passes") + counted(1106, "pass", "passes")).toBe("1 pass1\u00a0106 passes");
+});
 
 describe("numbers", () => {
   test("a negative number carries the real minus sign, a rounded zero none", () => {

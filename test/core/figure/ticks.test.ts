@@ -1,6 +1,35 @@
 import fc from "fast-check";
 import { describe, expect, test } from "vitest";
-import { latitudeTicks, linearTicks, longitudeTicks, niceStep, periodTicks } from "../../../core/figure/ticks";
+import {
+  fewestTicks,
+  latitudeTicks,
+  linearTicks,
+  longitudeTicks,
+  niceStep,
+  periodTicks,
+} from "../../../core/figure/ticks";
+
+describe("fewest ticks", () => {
+  test("a scale about zero is told by a round value on both sides, then one with zero, then one alone", () => {
+    const labels = fewestTicks(-0.6, 0.6).map((list) => list.map((tick) => tick.label));
+    expect(labels[0]).toEqual(["\u22120.5", "0.5"]);
+    expect(labels).toContainEqual(["0", "0.5"]);
+    expect(labels.at(-1)).toHaveLength(1);
+  });
+
+  test("a scale from zero has no value below it, and none of the lists leaves the scale", () => {
+    for (const to of [3e-6, 0.07, 1, 9.9, 450]) {
+      for (const list of [...fewestTicks(0, to), ...fewestTicks(-to, to)]) {
+        for (const { value } of list) expect(Math.abs(value)).toBeLessThanOrEqual(to * (1 + 1e-9));
+      }
+      expect(
+        fewestTicks(0, to)
+          .flat()
+          .every(({ value }) => value >= 0),
+      ).toBe(true);
+    }
+  });
+});
 
 describe("linear ticks", () => {
   test("steps are 1, 2 or 5 times a power of ten and cut the span into no more pieces than asked for", () => {

@@ -1,5 +1,5 @@
 import type { OpenStudy } from "../../../../core/contract/engine";
-import { formatCount, formatNumber, formatSignificant } from "../../../../core/figure/format";
+import { counted, formatNumber, formatSignificant } from "../../../../core/figure/format";
 import type { EddyTestResult } from "../../../../core/model/jets-result";
 import type { EddyTestSettings } from "../../../../core/study/schema";
 import { useBench, useBenchState } from "../../../app/bench-context";
@@ -92,5 +92,5 @@ function capital(text: string): string {
 function summary({ oceans, seed, population }: EddyTestSettings): string {
   const byHand = Object.values(population).filter((each) => each !== undefined).length;
   const eddies = byHand === 0 ? "eddies estimated" : `${byHand} of the eddies’ numbers set`;
-  return `${formatCount(oceans)} ${oceans === 1 ? "ocean" : "oceans"}, seed ${seed}, ${eddies}`;
+  return `${counted(oceans, "ocean")}, seed ${seed}, ${eddies}`;
 }

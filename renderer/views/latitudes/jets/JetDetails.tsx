@@ -1,5 +1,5 @@
 import type { RecordOverview } from "../../../../core/contract/engine";
-import { formatCount, formatLatitude, formatNumber } from "../../../../core/figure/format";
+import { counted, formatLatitude, formatNumber } from "../../../../core/figure/format";
 import type { JetRow, JetsResult, JetVerdictRow } from "../../../../core/model/jets-result";
 import { Units } from "../../../text/Units";
 import { directionWord, lifeDatesText, lifeEndText, rateText, redNoiseText, verdictText } from "./jet-texts";
@@ -43,8 +43,7 @@ function entries(
   record: RecordOverview,
   latitudeOf: (latitude: number) => string,
 ): readonly (readonly [title: string, value: string])[] {
-  const days = (value: number): string =>
-    Number.isFinite(value) ? `${formatCount(value)} ${Math.round(value) === 1 ? "day" : "days"}` : "–";
+  const days = (value: number): string => (Number.isFinite(value) ? counted(value, "day") : "–");
   const speeds = `${formatNumber(100 * jet.meanSpeed, 1)}, most ${formatNumber(100 * jet.peakSpeed, 1)} cm s⁻¹`;
   return [
     ["Lives", days(jet.lifetimeDays)],

@@ -1,5 +1,5 @@
 import type { OpenStudy, RecordOverview } from "../../../../core/contract/engine";
-import { formatCount } from "../../../../core/figure/format";
+import { counted, formatCount } from "../../../../core/figure/format";
 import { boxText } from "../../../../core/figure/record-text";
 import type { JetsResult } from "../../../../core/model/jets-result";
 import { useBenchState } from "../../../app/bench-context";
@@ -89,9 +89,9 @@ function notLookedFor(inBand: boolean): string {
 function noneFound({ shorterLines }: JetsResult, leastLifetimeDays: number): string {
   const lines = shorterLines === 1 ? "One line lives" : `${formatCount(shorterLines)} lines live`;
   const rest = shorterLines === 0 ? "" : ` ${lines} for less.`;
-  return `No line of strongest flow lives ${formatCount(leastLifetimeDays)} days in this band.${rest}`;
+  return `No line of strongest flow lives ${counted(leastLifetimeDays, "day")} in this band.${rest}`;
 }
 
 function spoken(count: number): string {
-  return count === 0 ? "No jets found." : `${count} ${count === 1 ? "jet" : "jets"} found.`;
+  return count === 0 ? "No jets found." : `${counted(count, "jet")} found.`;
 }

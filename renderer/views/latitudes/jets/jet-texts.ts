@@ -1,5 +1,5 @@
 import type { RecordOverview } from "../../../../core/contract/engine";
-import { formatCount, formatNumber, formatSignificant } from "../../../../core/figure/format";
+import { counted, formatCount, formatNumber, formatSignificant } from "../../../../core/figure/format";
 import { jetLatitudeText } from "../../../../core/figure/latitudes/jet-line";
 import { formatDate } from "../../../../core/figure/time-ticks";
 import type {
@@ -56,11 +56,13 @@ const lifeEnds: Readonly<Record<string, string>> = {
 /** What the eddy test says of a jet, in a sentence with both its numbers. */
 export function verdictText(verdict: JetVerdictRow, level: number): string {
   const { oceansAsStrong, oceans, p, adjustedP, leads } = verdict;
-  const beside = leads ? "" : " A stronger jet of its direction stands near by.";
+  const beside = leads
+    ? " It leads: no stronger jet of its direction stands near by."
+    : " It does not lead: a stronger jet of its direction stands near by.";
   const said = verdict.verdict === "held" ? "Held" : "Not told apart from eddies";
   return (
     `${said}: ${oceansAsStrong} of ${oceans} oceans of random eddies have as strong a jet near by, p ${chanceText(p)}; ` +
-    `corrected over all jets ${chanceText(adjustedP)}, held below ${formatSignificant(100 * level, 2)}\u00a0%.${beside}`
+    `corrected over the leading jets ${chanceText(adjustedP)}, held below ${formatSignificant(100 * level, 2)}\u00a0%.${beside}`
   );
 }
 
@@ -89,7 +91,7 @@ export function lifeDatesText({ firstDay, lastDay }: JetRow, { time }: RecordOve
 /** "900 days": the record's length. */
 export function recordDaysText({ time }: RecordOverview): string {
   const days = Math.round(time.values.length * Math.abs(time.step || 1));
-  return `${formatCount(days)} ${days === 1 ? "day" : "days"}`;
+  return counted(days, "day");
 }
 
 /** "8 found, 6 held": what a person wants to know first; without a standing test only what was found. */
@@ -102,14 +104,16 @@ export function countText(found: number, held: number | null): string {
 export function verdictLegend({ oceans, halfSpacingDegrees, level }: EddyTestResult): string {
   return (
     `“vs eddies”: share of ${formatCount(oceans)} random-eddy oceans with as strong a jet within ` +
-    `${formatNumber(halfSpacingDegrees, 1)}°. Bold: held at ${formatSignificant(100 * level, 2)}\u00a0% after correction over all jets.`
+    `${formatNumber(halfSpacingDegrees, 1)}°. Bold: held at ${formatSignificant(100 * level, 2)}\u00a0% after correction over the leading jets.`
   );
 }
 
 /** Says that a lone strong jet may not have been held, and how many oceans are enough for it; empty where there are enough. */
 export function tooFewOceansText({ oceans, level, verdicts }: EddyTestResult): string {
-  // The least chance that n oceans can show is 1 in n + 1; correction multiplies it by the number of jets.
-  const wanted = Math.ceil(verdicts.length / level - 1e-9) - 1;
+  // The least chance that n oceans can show is 1 in n + 1; correction multiplies it by the number of tests.
+  const tests = verdicts.filter(({ leads }) => leads).length;
+  const wanted = Math.ceil(tests / level - 1e-9) - 1;
   if (oceans >= wanted) return "";
-  return `${formatCount(oceans)} oceans are few: with ${formatCount(wanted)} or more even a lone jet among ${verdicts.length} can be held.`;
+  const few = `${counted(oceans, "ocean")} ${oceans === 1 ? "is" : "are"} few`;
+  return `${few}: with ${formatCount(wanted)} or more even a lone jet among ${tests} leading ones can be held.`;
 }

@@ -224,6 +224,19 @@ describe("periods and days", () => {
     }
   });
 
+  test("edges that run ahead of the result move alone: words and response stay those of the result", () => {
+    const ahead = latitudesScene(
+      { ...input, heldBand: { shortestDays: 259, longestDays: 540, filter: "lanczos" } },
+      wide,
+    );
+    const said = (of: Scene) => texts(of).filter((text) => /periods|weakens/.test(text));
+    expect(said(ahead)).toEqual(said(scene));
+    expect(ahead.description).toBe(scene.description);
+    expect(path("spectrum-response", ahead)).toEqual(path("spectrum-response"));
+    expect(path("spectrum-edges", ahead).d).not.toBe(path("spectrum-edges").d);
+    expect(texts(ahead)).toContain("259 d");
+  });
+
   test("without a filter there is no band, no edge and no response", () => {
     const plain = changed({}, { band: { shortestDays: 90, longestDays: 540, filter: "none" } });
     const ids = latitudesScene(plain, wide).marks.map((mark) => mark.id);

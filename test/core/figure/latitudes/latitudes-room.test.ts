@@ -77,6 +77,20 @@ describe("room", () => {
     });
   });
 
+  test("colour keys keep their width under long headings and end with their panels", () => {
+    const size = { width: 1100, height: 700 };
+    const keys = (of: LatitudesInput) =>
+      latitudesScene(of, size).marks.filter((mark) => mark.kind === "raster" && mark.id.endsWith("key-raster"));
+    const long = latitudesScene(changed({}, longWords), size);
+    for (const [index, id] of ["map", "latitude-time"].entries()) {
+      const frame = long.panels.find((panel) => panel.id === id);
+      const key = keys(changed({}, longWords))[index];
+      if (!frame || key?.kind !== "raster") throw new Error(`no key over ${id}`);
+      expect(key.x + key.width).toBe(frame.x + frame.width);
+      expect(key.width).toBeLessThan(frame.width / 2);
+    }
+  });
+
   test("the row alone has three panels", () => {
     const row = latitudesScene(input, { width: 1000, height: 420, arrangement: "row" });
     expect(row.panels.map((frame) => frame.id)).toEqual(["map", "zonal-mean", "latitude-time"]);
