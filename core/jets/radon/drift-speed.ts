@@ -5,7 +5,10 @@ import { type MovingPicture, naturalScales } from "./natural-scales";
 import { resampledAngles } from "./segments";
 
 export interface DriftSettings {
-  /** "mean": one mean off all values; "row means": each position's mean in time off, so that what stands still is gone. */
+  /**
+   * "mean": one mean off all values, so that a standing pattern counts and has speed zero; "row means": each position's mean
+   * in time off, so that what stands still is gone and only what moves (or noise) is left to tell.
+   */
   readonly remove: "mean" | "row means";
   /** Degrees between the angles tried, on axes scaled by the picture's own scales; null: from the record's length. */
   readonly angleStepDegrees: number | null;
@@ -55,9 +58,9 @@ const mostSegments = 12;
  * and the angles tried resolve it; the best angle is then refined by golden section.
  *
  * Limits: the curve of shares is computed in segments of time of at least two periods, segments are drawn with replacement
- * and the 2.5 and 97.5 % quantiles of the resampled answers taken ("bootstrap"); they are widened to hold the answer. Where
- * the record has under four such segments the limits are those of the peak at half height above the median ("peak width"):
- * a statement of resolution, not of chance. NaN throughout for fewer than three rows or columns or no variance. Work grows
+ * and the 2.5 and 97.5 % quantiles of the resampled answers taken ("bootstrap"). Where the record has under four such segments
+ * the limits are those of the peak at half height above the median ("peak width"): a statement of resolution, not of chance.
+ * Neither is nearer to the answer than half an angle step, which is what the record's length resolves. NaN throughout for fewer than three rows or columns or no variance. Work grows
  * with cells × angles (about 20 s for 80 rows of 10,000 dates): thin long oversampled records first.
  */
 export function driftSpeed(picture: MovingPicture, settings: DriftSettings): DriftSpeed {
@@ -86,8 +89,8 @@ export function driftSpeed(picture: MovingPicture, settings: DriftSettings): Dri
       : peakAngles(angles, shares, best, medianShare);
   return {
     speed,
-    low95: Math.min(speed, unit * Math.tan(low)),
-    high95: Math.max(speed, unit * Math.tan(high)),
+    low95: unit * Math.tan(Math.min(low, angle - step / 2)),
+    high95: unit * Math.tan(Math.max(high, angle + step / 2)),
     limits: segments >= fewestSegments ? "bootstrap" : "peak width",
     speedStep: (unit * step) / Math.cos(angle) ** 2,
     share: lineVarianceShare(points, angle),

@@ -1,4 +1,4 @@
-import { driftSpeed } from "../../jets/radon/drift-speed";
+import { type DriftSettings, driftSpeed } from "../../jets/radon/drift-speed";
 import type { Drift } from "../../model/scales-result";
 import { blockMeans } from "./block-means";
 
@@ -17,13 +17,20 @@ export interface PositionTime {
   readonly days: Float64Array;
 }
 
-/** How the pattern of a position-time picture moves, each position's own mean off; null where nothing varies or moves. */
-export function driftOf({ quantity, values, degrees, metres, days }: PositionTime): Drift | null {
+/**
+ * How the pattern of a position-time picture moves; null where nothing varies. `remove` "row means" asks for what moves
+ * alone (waves and eddies along a latitude); "mean" for the whole pattern (jets across latitudes): jets that stand still
+ * are then the pattern, whose speed is zero, and not taken off to leave the noise about them as the answer.
+ */
+export function driftOf(
+  { quantity, values, degrees, metres, days }: PositionTime,
+  remove: DriftSettings["remove"],
+): Drift | null {
   const rows = degrees.length;
   const blocks = blockMeans(values, rows, days, mostColumns);
   const found = driftSpeed(
     { values: blocks.values, positionMetres: metres, days: blocks.days },
-    { remove: "row means", angleStepDegrees: null, resamples, seed },
+    { remove, angleStepDegrees: null, resamples, seed },
   );
   if (Number.isNaN(found.speed)) return null;
   return {

@@ -13,6 +13,13 @@ export function withInterval(spectrum: SpectrumResult, stepDays: number): Period
   return { ...spectrum, degreesOfFreedom, lowFactor: low, highFactor: high };
 }
 
+/** A periodogram of uneven dates with the limits of one series: two degrees of freedom a frequency. */
+export function withPeriodogramInterval(spectrum: SpectrumResult): PeriodSpectrum {
+  const degreesOfFreedom = 2;
+  const { low, high } = spectrumInterval(degreesOfFreedom);
+  return { ...spectrum, degreesOfFreedom, lowFactor: low, highFactor: high };
+}
+
 /** Variance of a one-sided density between two frequencies; every bin stands for half a step to either side. */
 export function varianceBetween({ frequency, density }: SpectrumResult, low: number, high: number): number {
   const step = frequency[1];

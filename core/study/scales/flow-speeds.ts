@@ -5,7 +5,10 @@ export interface VelocitySums {
   readonly count: readonly Int32Array[];
 }
 
-/** Root-mean-square speeds of the velocity vector, m s-1: the whole flow, and what departs from each cell's time mean. */
+/**
+ * Root-mean-square speeds of the velocity vector, m s-1: the whole flow, and what departs from each cell's time mean. The
+ * latter is over cells with two valid dates or more, NaN without any: one date alone has no mean to depart from.
+ */
 export interface FlowSpeeds {
   readonly total: number;
   readonly eddy: number;
@@ -24,25 +27,28 @@ export function flowSpeeds(sums: VelocitySums, rowWeights: Float64Array): FlowSp
   const columns = sums.sum[0].length / rows;
   const totalByRow = new Float64Array(rows);
   const eddyByRow = new Float64Array(rows);
-  let [total, eddy, weight] = [0, 0, 0];
+  let [total, eddy, weight, eddyWeight] = [0, 0, 0, 0];
   for (let row = 0; row < rows; row++) {
-    let [rowTotal, rowEddy, cells] = [0, 0, 0];
+    let [rowTotal, rowEddy, cells, eddyCells] = [0, 0, 0, 0];
     for (let cell = row * columns; cell < (row + 1) * columns; cell++) {
       if (sums.count[0][cell] === 0 || sums.count[1][cell] === 0) continue;
       cells++;
+      const hasEddy = sums.count[0][cell] > 1 && sums.count[1][cell] > 1;
+      if (hasEddy) eddyCells++;
       for (const q of [0, 1]) {
         const count = sums.count[q][cell];
         const mean = sums.sum[q][cell] / count;
         const square = sums.squares[q][cell] / count;
         rowTotal += square;
-        rowEddy += Math.max(0, square - mean * mean);
+        if (hasEddy) rowEddy += Math.max(0, square - mean * mean);
       }
     }
     totalByRow[row] = Math.sqrt(rowTotal / cells);
-    eddyByRow[row] = Math.sqrt(rowEddy / cells);
+    eddyByRow[row] = Math.sqrt(rowEddy / eddyCells);
     total += rowWeights[row] * rowTotal;
     eddy += rowWeights[row] * rowEddy;
     weight += rowWeights[row] * cells;
+    eddyWeight += rowWeights[row] * eddyCells;
   }
-  return { total: Math.sqrt(total / weight), eddy: Math.sqrt(eddy / weight), totalByRow, eddyByRow };
+  return { total: Math.sqrt(total / weight), eddy: Math.sqrt(eddy / eddyWeight), totalByRow, eddyByRow };
 }

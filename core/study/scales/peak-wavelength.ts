@@ -23,8 +23,9 @@ export function peakWavelength(wavenumber: Float64Array, density: Float64Array):
 
 /**
  * Peak of the mean of several dates' spectra, with percentile limits from 1000 resamples of whole blocks of dates (length
- * after Wilks from the lag-one autocorrelation of the dates' variance). `densities` in order of date; NaN limits under
- * eight dates.
+ * after Wilks from the lag-one autocorrelation of the dates' variance). Those are limits of sampling; no record of this length
+ * tells neighbouring wavenumbers apart, so that the limits lie at least half a step of wavenumber to either side of the
+ * peak. `densities` in order of date; NaN limits under eight dates.
  */
 export function peakOfDates(wavenumber: Float64Array, densities: readonly Float64Array[]): Estimate {
   const meanOf = (indices: ArrayLike<number>): number => {
@@ -42,5 +43,10 @@ export function peakOfDates(wavenumber: Float64Array, densities: readonly Float6
   const lagOne = autocorrelation(variance, 1)[1];
   const block = blockLength(count, Number.isNaN(lagOne) ? 0 : lagOne);
   const { low, high } = percentileInterval(bootstrapStatistics(count, meanOf, { block, resamples, seed }));
-  return { value, low95: Math.min(value, low), high95: Math.max(value, high) };
+  const halfStep = (wavenumber[1] - wavenumber[0]) / 2;
+  return {
+    value,
+    low95: Math.min(1 / (1 / value + halfStep), low),
+    high95: Math.max(1 / (1 / value - halfStep), high),
+  };
 }

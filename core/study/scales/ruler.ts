@@ -14,7 +14,12 @@ export function rulerOf(lengths: Omit<ScaleLengths, "ruler">): RulerLength[] {
     row("spacing", "Jets of the mean", lengths.meanSpacing / 2, "half the mean distance of extremes of one sign"),
     row("band-spacing", "Jets in the band", lengths.bandSpacing / 2, "half the mean distance of extremes of one sign"),
     {
-      ...row("peak", "Peak of each map's u", peakWavelength.value / 2, "half the wavelength of most variance"),
+      ...row(
+        "peak",
+        "Peak of each map's u",
+        peakWavelength.value / 2,
+        "half the wavelength of most variance; limits of sampling, and at least half a step of wavenumber",
+      ),
       halfWavelength: {
         value: peakWavelength.value / 2,
         low95: peakWavelength.low95 / 2,

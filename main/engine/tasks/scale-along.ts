@@ -19,7 +19,7 @@ export function scaleAlongTask(
   const picture = { ...args, values };
   const spectrum = args.even ? waveSpectrum(picture) : null;
   job.poll();
-  const drift = driftOf(picture);
+  const drift = driftOf(picture, "row means");
   job.count();
   return { drift, spectrum };
 }

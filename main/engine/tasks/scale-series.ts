@@ -2,15 +2,18 @@ import { zonalityByAveraging } from "../../../core/jets/zonality";
 import type { EnergyByPeriod, PeriodSpectrum } from "../../../core/model/scales-result";
 import { type BackgroundBasis, backgroundBasis } from "../../../core/numeric/background";
 import { quantityById } from "../../../core/ocean/quantities/evaluate";
-import { regionSpectrum } from "../../../core/study/period-spectrum";
+import { regionSpectrum, unevenRegionSpectrum } from "../../../core/study/period-spectrum";
 import { averagingBlocks } from "../../../core/study/scales/averaging";
-import { energyByPeriod, withInterval } from "../../../core/study/scales/energy-by-period";
+import { energyByPeriod, withInterval, withPeriodogramInterval } from "../../../core/study/scales/energy-by-period";
 import type { JobFlags } from "../job";
 
 /** Fewest dates from which a spectrum is taken. */
 const fewestDates = 16;
 
-/** What the sampled cells' series tell: zonality by averaging, the spectrum by period, energy by time scale. */
+/**
+ * What the sampled cells' series tell: zonality by averaging, the spectrum by period, energy by time scale. Uneven dates
+ * leave the spectrum alone, a Lomb-Scargle periodogram: averages over blocks and shares of energy want even steps.
+ */
 export function scaleSeriesTask(
   args: {
     /** `u[cell * dates + date]`. */
@@ -40,7 +43,11 @@ export function scaleSeriesTask(
     days: Float64Array.from(blocks, (length) => length * stepDays),
     zonality: zonalityByAveraging({ u, v, dates, weights: cellWeights }, blocks),
   };
-  if (!args.even || dates < fewestDates) return { zonality, period: null, energy: null };
+  if (dates < fewestDates) return { zonality, period: null, energy: null };
+  if (!args.even) {
+    const uneven = unevenRegionSpectrum(quantityById("u"), args.u, cellWeights, days, args.basis);
+    return { zonality, period: uneven.density.length > 0 ? withPeriodogramInterval(uneven) : null, energy: null };
+  }
   const spectrum = (id: "u" | "v", basis: BackgroundBasis) => {
     job.poll();
     return regionSpectrum(quantityById(id), args[id], cellWeights, stepDays, basis);

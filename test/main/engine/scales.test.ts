@@ -198,7 +198,10 @@ describe("the sample", () => {
       expect(halfWavelength.value).toBeLessThan(600_000);
     }
     expect(forcing.gradient.filter(Number.isFinite).every((value) => Math.abs(value) < 1e-10)).toBe(true);
-    expect(result.notes).toEqual([expect.stringMatching(/built-in table/)]);
+    expect(result.notes).toEqual([
+      expect.stringMatching(/built-in table/),
+      expect.stringMatching(/first baroclinic mode's/),
+    ]);
     expectPicturesToShow(result);
   });
 
@@ -248,6 +251,9 @@ describe("little data", () => {
     expect(result.lengths.totalSpeed).toBeGreaterThan(0);
     expect(result.lengths.peakWavelength.low95).toBeNaN();
     expect(result.notes.join(" ")).toMatch(/No spectrum by period: fewer than 16 dates/);
+    expect(Number.isNaN(result.lengths.eddySpeed)).toBe(dates < 2);
+    expect(/rests on the speed of the eddies, which is unknown/.test(result.notes.join(" "))).toBe(dates < 2);
+    expect(result.notes.join(" ")).not.toMatch(/on half its cells/);
     expectPicturesToShow(result);
   });
 

@@ -61,6 +61,16 @@ describe("speeds of the flow", () => {
     expectClose(speeds.total, Math.sqrt((2 * 4 + 5) / 5), { relative: 1e-15, because: "arithmetic" });
     expect(Array.from(meanPlane(sums, 0))).toEqual([1, 1, 2, Number.NaN]);
   });
+
+  test("of the eddies are unknown, not zero, with one date, which leaves the whole flow known", () => {
+    const one = {
+      sum: [Float64Array.of(1, 1), Float64Array.of(0, 0)],
+      squares: [Float64Array.of(1, 1), Float64Array.of(0, 0)],
+      count: [Int32Array.of(1, 1), Int32Array.of(1, 1)],
+    };
+    const speeds = flowSpeeds(one, Float64Array.of(1, 1));
+    expect([speeds.total, speeds.eddy, ...speeds.eddyByRow]).toEqual([1, Number.NaN, Number.NaN, Number.NaN]);
+  });
 });
 
 test("block means keep a straight line, count what is valid and drop the incomplete block", () => {

@@ -86,7 +86,8 @@ test("the peak of many dates has limits that hold the true wavelength and are na
   const { value, low95, high95 } = peakOfDates(wavenumber, densities);
   expect(low95).toBeLessThanOrEqual(300_000);
   expect(high95).toBeGreaterThanOrEqual(300_000);
-  expect(value).toBeGreaterThan(low95 - 1e-6);
+  expect(1 / low95 - 1 / value).toBeGreaterThanOrEqual(0.999 / 6_000_000);
+  expect(1 / value - 1 / high95).toBeGreaterThanOrEqual(0.999 / 6_000_000);
   expect(high95 / low95).toBeLessThan(2);
   expect(peakOfDates(wavenumber, densities)).toEqual({ value, low95, high95 });
 });

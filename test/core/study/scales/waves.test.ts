@@ -74,13 +74,13 @@ describe("waves along a latitude", () => {
     expectClose(zonalPeak(spectrum), 400_000, { relative: 0.05, because: "a parabola on a Hann window's bins" });
     expect(withCurves(spectrum, still, Number.NaN)?.curves.length).toBe(2);
 
-    const drift = driftOf(picture);
+    const drift = driftOf(picture, "row means");
     expectClose(drift?.speed.value ?? 0, -0.03, { relative: 0.01, because: "a fifth of the angle step" });
     expect(drift?.speed.low95).toBeLessThanOrEqual(-0.03 * 0.99);
   });
 
   test("a wave that moves east at 5 cm/s drifts east", () => {
-    expectClose(driftOf(moving(0.05))?.speed.value ?? 0, 0.05, {
+    expectClose(driftOf(moving(0.05), "row means")?.speed.value ?? 0, 0.05, {
       relative: 0.01,
       because: "a fifth of the angle step",
     });
@@ -88,9 +88,9 @@ describe("waves along a latitude", () => {
 
   test("what does not vary, has few dates or half its picture missing has neither drift nor spectrum", () => {
     const picture = moving(-0.03);
-    expect(driftOf({ ...picture, values: picture.values.map(() => 0.3) })).toBeNull();
+    expect(driftOf({ ...picture, values: picture.values.map(() => 0.3) }, "row means")).toBeNull();
     const blank = { ...picture, values: picture.values.map(() => Number.NaN) };
-    expect(driftOf(blank)).toBeNull();
+    expect(driftOf(blank, "row means")).toBeNull();
     expect(waveSpectrum(blank)).toBeNull();
     const short = { ...picture, days: days.slice(0, 3), values: picture.values.slice(0, 240) };
     expect(waveSpectrum(short)).toBeNull();
