@@ -59,7 +59,8 @@ const mostSegments = 12;
  *
  * Limits: the curve of shares is computed in segments of time of at least two periods, segments are drawn with replacement
  * and the 2.5 and 97.5 % quantiles of the resampled answers taken ("bootstrap"). Where the record has under four such segments
- * the limits are those of the peak at half height above the median ("peak width"): a statement of resolution, not of chance.
+ * the limits are the outermost slopes at half the answer's height above the median, a rival peak's included ("peak width"): a
+ * statement of resolution, not of chance.
  * Neither is nearer to the answer than half an angle step, which is what the record's length resolves. NaN throughout for fewer than three rows or columns or no variance. Work grows
  * with cells × angles (about 20 s for 80 rows of 10,000 dates): thin long oversampled records first.
  */
@@ -164,11 +165,12 @@ function refine(points: ScaledPoints, centre: number, step: number): number {
   return (low + high) / 2;
 }
 
+/** The outermost angles at half height, a rival peak's included: noise has several, a pattern that moves has one. */
 function peakAngles(angles: Float64Array, shares: Float64Array, best: number, median: number) {
   const level = (shares[best] + median) / 2;
-  let low = best;
-  let high = best;
-  while (low > 0 && shares[low - 1] >= level) low--;
-  while (high < angles.length - 1 && shares[high + 1] >= level) high++;
+  let low = 0;
+  let high = angles.length - 1;
+  while (low < best && !(shares[low] >= level)) low++;
+  while (high > best && !(shares[high] >= level)) high--;
   return { low: angles[Math.max(0, low - 1)], high: angles[Math.min(angles.length - 1, high + 1)] };
 }

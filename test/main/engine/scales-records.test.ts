@@ -20,6 +20,13 @@ test("the sample's jets, the mean kept in what is filtered, stand still across l
   expect(high95).toBeGreaterThan(0);
 });
 
+test("in a band without the mean nothing that stands is left, and the limits of a drift of noise hold zero", async () => {
+  const { drift } = await engine.scales({ open: sampleStudy(), grid: "A" });
+  expect(drift.acrossLatitudes?.limits).toBe("peak width");
+  expect(drift.acrossLatitudes?.speed.low95).toBeLessThan(0);
+  expect(drift.acrossLatitudes?.speed.high95).toBeGreaterThan(0);
+});
+
 test("uneven dates have a spectrum by period, its limits those of two degrees of freedom", async () => {
   const file = await writeMadeGrid(join(temporary, "uneven.nc"), {
     latitudes: line(28, 0.25, 17),
