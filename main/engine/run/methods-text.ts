@@ -7,7 +7,7 @@ import { leastZonalCoverage } from "../../../core/study/reduction";
 import type { Study } from "../../../core/study/schema";
 import type { Analysis } from "./analysis";
 import { jetsMethods } from "./jets-methods";
-import { scalesMethods } from "./scales-methods";
+import { scalesMethods, scalesReferences } from "./scales-methods";
 import { version } from "./version";
 
 /** methods.md: what was done, in sentences whose numbers are the study's own, with the papers to cite and the cautions. */
@@ -38,7 +38,9 @@ export function methodsText(analysis: Analysis): string {
     "",
     "## References",
     "",
-    ...references(study, analysis.jets.eddyTest !== null).map((entry) => `- ${entry}`),
+    ...[...new Set([...references(study, analysis.jets.eddyTest !== null), ...scalesReferences(analysis.scales)])]
+      .sort()
+      .map((entry) => `- ${entry}`),
     "",
     `Made with Strake ${version}.`,
     "",
