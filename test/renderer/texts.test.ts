@@ -1,7 +1,7 @@
 import { describe, expect, test } from "vitest";
 import { makeAxis, makeTimeAxis } from "../../core/model/axis";
 import { joinPath, pathsFromText } from "../../renderer/state/paths";
-import { bytesText, recordText } from "../../renderer/text/record";
+import { bytesText, datesText, periodText, recordText } from "../../renderer/text/record";
 import { spokenCursor } from "../../renderer/text/spoken";
 import { doubtText, intervalText, valueStyle, valueText } from "../../renderer/text/values";
 import { coverageBars } from "../../renderer/views/sources/CoverageBar";
@@ -77,4 +77,12 @@ describe("long things are shown short", () => {
     expect(coverageBars(coverage, 600).filter((share) => share === 0)).toHaveLength(1);
     expect(coverageBars([1, 0.5], 600)).toEqual([1, 0.5]);
   });
+});
+
+test("a record of one date says so once, and longer ones count their dates", () => {
+  const axisOf = (...days: readonly number[]) => makeTimeAxis(days, "standard", "made up");
+  expect(datesText(axisOf(9000))).toBe("one date");
+  expect(periodText(axisOf(9000))).not.toContain(" to ");
+  expect(datesText(axisOf(9000, 9001))).toBe("2 dates, daily");
+  expect(datesText(axisOf(9000, 9007, 9014))).toBe("3 dates, every 7 days");
 });

@@ -52,7 +52,7 @@ export function rowHeadingMarks(input: LatitudesInput, layout: LatitudesLayout, 
     {
       id: "zonal-mean",
       x: zonalMean.x,
-      width: zonalMean.width + panelGap - 8,
+      width: zonalMean.width + panelGap - heading,
       heading: ["Zonal mean"],
       below: [
         listed(units, "mean of all dates, 95 % band"),

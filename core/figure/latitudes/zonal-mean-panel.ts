@@ -122,6 +122,7 @@ function zonalTicks(input: LatitudesInput, layout: LatitudesLayout, panel: Panel
     fewestTicks(from * scale, to * scale)
       .map((list) => list.map(({ value, label }) => ({ value: value / scale, label })))
       .find((list) => list.every(isLabelled) && labelsKeepApart(panel, list, small, 0.4 * small));
-  const ticks = roomiest.filter(isLabelled).length > 1 ? roomiest : (fewer() ?? roomiest);
+  // A label lost at one side only would make the scale look lopsided.
+  const ticks = roomiest.length > 1 && roomiest.every(isLabelled) ? roomiest : (fewer() ?? roomiest);
   return bottomTickMarks(panel, ticks, within, theme, layout.sizes);
 }

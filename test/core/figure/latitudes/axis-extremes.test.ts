@@ -50,6 +50,11 @@ describe("zonal means", () => {
         const drawn = latitudesScene(changed({ onDate: flat, profile: { mean, half95: flat } }, { quantity }), size);
         const labels = drawn.marks.filter((mark) => /^zonal-mean-x-\d/.test(mark.id));
         expect(labels.length).toBeGreaterThanOrEqual(2);
+        const negative = labels.filter((mark) => mark.kind === "text" && mark.text.startsWith("\u2212"));
+        const zero = labels.filter((mark) => mark.kind === "text" && Number(mark.text) === 0);
+        // Either side of zero has as many labels, unless zero and one value are all there is room for.
+        const positive = labels.length - negative.length - zero.length;
+        if (signed && labels.length > 2) expect(negative.length).toBe(positive);
       }
     }
   });
