@@ -1,15 +1,10 @@
-import { cpSync, mkdirSync, writeFileSync } from "node:fs";
+import { cpSync, writeFileSync } from "node:fs";
 import path from "node:path";
-import type { Browser } from "playwright-core";
-import { afterAll, beforeAll, beforeEach, describe, expect, test } from "vitest";
+import { beforeEach, describe, expect, test } from "vitest";
 import { temporaryFolder } from "../temporary-folder";
-import { launchBrowser } from "./browser";
-import { type Door, sampleStudy, startDoor } from "./door";
-import { drawn, openWindow, panelFrame, startAfresh, steady, type TestWindow } from "./window";
-
-let browser: Browser;
-let door: Door;
-let shown: TestWindow;
+import { sampleStudy } from "./door";
+import { sharedWindow } from "./shared-window";
+import { panelFrame, steady } from "./window";
 
 /** The sample with its mean flow kept, all that is slower than 90 days shown, and few oceans so that the test is short. */
 function standingStudy(): string {
@@ -31,25 +26,9 @@ function standingStudy(): string {
   return file;
 }
 
-const study = standingStudy();
+const shown = sharedWindow(standingStudy());
 
-beforeAll(async () => {
-  mkdirSync("out/app", { recursive: true });
-  browser = await launchBrowser();
-  door = await startDoor([study]);
-  shown = await openWindow(browser, door.address);
-});
-
-afterAll(async () => {
-  await browser?.close();
-  await door?.stop();
-});
-
-beforeEach(async () => {
-  await startAfresh(shown);
-  await drawn(shown.page);
-  await found();
-});
+beforeEach(found);
 
 /** Waits until the jets of the settings on screen are listed. */
 async function found(): Promise<void> {

@@ -1,30 +1,9 @@
-import { mkdirSync } from "node:fs";
-import type { Browser } from "playwright-core";
-import { afterAll, beforeAll, beforeEach, describe, expect, test } from "vitest";
-import { launchBrowser } from "./browser";
-import { type Door, sampleStudy, startDoor } from "./door";
-import { drawn, openWindow, panelPixels, startAfresh, steady, type TestWindow } from "./window";
+import { describe, expect, test } from "vitest";
+import { sampleStudy } from "./door";
+import { sharedWindow } from "./shared-window";
+import { panelPixels, steady } from "./window";
 
-let browser: Browser;
-let door: Door;
-let shown: TestWindow;
-
-beforeAll(async () => {
-  mkdirSync("out/app", { recursive: true });
-  browser = await launchBrowser();
-  door = await startDoor([sampleStudy]);
-  shown = await openWindow(browser, door.address);
-});
-
-afterAll(async () => {
-  await browser?.close();
-  await door?.stop();
-});
-
-beforeEach(async () => {
-  await startAfresh(shown);
-  await drawn(shown.page);
-});
+const shown = sharedWindow(sampleStudy);
 
 const section = (title: string) =>
   shown.page
